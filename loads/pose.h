@@ -1,0 +1,31 @@
+#pragma once
+
+/// Where a reflector looks and where the wind comes from. Angles in radians.
+///
+/// World axes: Z up, X horizontal along the rotation axis, Y = Z x X. Elevation: angle of the optical axis
+/// above the horizon, 0 faces +Y, 90 deg the zenith, above 90 deg it leans to -Y, below 0 it faces down.
+/// Collector axes in world axes: x = X, z = (0, cos e, sin e), y = (0, sin e, -cos e); at 90 deg both
+/// coincide. Wind from psi: clockwise seen from above, 0 blows from +Y, pi from -Y.
+
+#include <Eigen/Core>
+
+namespace focalframe::loads {
+
+/// Rows = collector axes x, y, z in world axes: v_collector = rotation * v_world.
+Eigen::Matrix3d world_to_collector(double elevation);
+
+/// Pitch seen by the wind, wrapped into (-pi, pi]: 0 = concave face to the wind, pi/2 = zenith, pi = convex
+/// back to the wind. Equals the elevation for wind from +Y and pi - elevation for wind from -Y.
+double pitch_seen_by_wind(double elevation, double wind_from);
+
+/// +1 when the wind comes from the +Y side (|psi| <= 90 deg), -1 from the -Y side.
+int upwind_side(double wind_from);
+
+/// Angle between the wind and the plane normal to the rotation axis, 0 .. pi/2.
+double yaw(double wind_from);
+
+/// Share of the cross-plane load left at a yaw angle: cos^2 up to 60 deg, 0.25 beyond (independence
+/// principle, from memory, a standard approximation).
+double yaw_factor(double yaw);
+
+}  // namespace focalframe::loads

@@ -1,0 +1,232 @@
+#pragma once
+
+/// What a user says about a collector: plain values, SI, in the words of the design file.
+///
+/// One struct per element of the file, one member per attribute. NaN, 0 for counts, and empty text mean "not
+/// given"; defaults that are not NaN are the ones a user gets by leaving the attribute out, and every one of
+/// them is listed in models/schema.cpp with the reason for it. Nothing here is computed.
+
+#include <limits>
+#include <map>
+#include <string>
+#include <vector>
+
+namespace focalframe::models {
+
+inline constexpr double not_given = std::numeric_limits<double>::quiet_NaN();
+
+/// How a value is known: "measured", "drawing", "catalogue", "agreed", "guess"; empty = not said.
+using Basis = std::string;
+
+/// A profile, by shape word: round-tube (outside-diameter, wall), square-tube (side, wall), rectangular-tube
+/// (depth, width, wall; depth stands upright), round-bar (outside-diameter), flat (depth, thickness).
+struct ProfileInput {
+  std::string shape, material;
+  double outside_diameter = not_given, side = not_given, depth = not_given, width = not_given;  ///< [m]
+  double wall = not_given, thickness = not_given;                                               ///< [m]
+};
+
+struct ParabolaInput {
+  double aperture = not_given;                         ///< full width across the trough [m]
+  double focal_length = not_given, depth = not_given;  ///< one of them, or both if they agree [m]
+};
+
+struct RowInput {
+  int modules = 0;                       ///< between two neighbouring pylons each
+  double module_length = not_given;      ///< pylon to pylon [m]
+  std::string coupling = "torque-only";  ///< | "continuous"
+  int drive_after_module = -1;           ///< 0 = at the row's first end; -1 = the middle
+  double row_azimuth = not_given;        ///< bearing of +X [rad]
+  double axis_height = not_given;        ///< rotation axis above ground [m]
+  double axis_to_vertex = not_given;     ///< rotation axis below (behind) the mirror vertex [m]
+  std::string axis_word;  ///< "balanced": through the centre of gravity; then axis_to_vertex is NaN
+  double tube_to_vertex = not_given;  ///< tube centre below the vertex [m]
+  double tube_to_mirror = not_given;  ///< instead: gap between tube skin and mirror at the vertex [m]
+  double end_gap = not_given;  ///< first rib from the pylon centre line [m]; default module length / 50
+};
+
+struct TubeInput {
+  ProfileInput profile;
+};
+
+struct RibsInput {
+  std::string kind = "plate";
+  int per_module = 0;  ///< each rib is a pair of arms
+  double thickness = not_given, depth_at_tube = not_given, depth_at_tip = not_given;  ///< [m]
+  std::string material;
+  int elements = 10;  ///< beam elements along one arm, at least
+};
+
+struct PurlinsInput {
+  int count = 0;  ///< over both sides together, even
+  ProfileInput profile;
+};
+
+struct EndPlatesInput {
+  double diameter = not_given, thickness = not_given;  ///< [m], only for the mass when mass is not given
+  double mass = not_given;                             ///< each [kg]
+  double twist_stiffness = not_given;    ///< of the joint between two modules [N m/rad]; NaN = rigid
+  double bending_stiffness = not_given;  ///< of the joint, coupling "continuous" only [N m/rad]; NaN = rigid
+};
+
+struct MirrorInput {
+  std::string kind = "sheet";    ///< | "facets"
+  double thickness = not_given;  ///< [m]
+  std::string material;
+  double mass = not_given;        ///< instead of thickness x density [kg/m^2]
+  std::string fixed_to = "ribs";  ///< | "purlins"
+  double pad_height = 0;          ///< facets: mirror back above what it stands on [m]
+  double pad_mass = 0;            ///< facets: pads and brackets [kg/m^2]
+  bool sheet_braces_ribs = false;
+};
+
+struct SleeveInput {
+  double outside_diameter = not_given, wall = not_given;  ///< [m]
+  std::string material;
+};
+
+struct PostsInput {
+  int per_module = 0;
+  ProfileInput profile;
+  std::string stand_on = "tube";
+};
+
+struct ReceiverInput {
+  double outside_diameter = not_given, wall = not_given;  ///< [m]
+  std::string material;
+  std::string filled_with;          ///< water | oil | salt | nothing
+  double fill_density = not_given;  ///< overrides the word [kg/m^3]
+  SleeveInput sleeve;
+  PostsInput posts;
+};
+
+struct CounterweightsInput {
+  int per_module = 0;
+  double mass = not_given;         ///< each [kg]
+  double behind_tube = not_given;  ///< centre of mass behind the tube's centre, away from the mirror [m]
+};
+
+struct FootingInput {
+  double sideways = not_given, along_row = not_given, upright = not_given;  ///< [N/m]; infinity = rigid
+  double rocking = not_given;               ///< about both horizontal axes [N m/rad]; infinity = rigid
+  double twisting = not_given;              ///< about the vertical [N m/rad]; NaN = as rocking
+  double overturning_capacity = not_given;  ///< design moment about the row's direction at ground [N m]
+  double uplift_capacity = not_given;       ///< design vertical pull [N]
+};
+
+struct PylonsInput {
+  std::string at = "every joint";
+  ProfileInput profile;
+  double head_mass = 0;  ///< bearing and head plate, each [kg]
+  FootingInput footing;
+};
+
+struct DriveInput {
+  double moving_torque = not_given, holding_torque = not_given;  ///< rated [N m]
+  double stiffness = not_given;                                  ///< [N m/rad]; infinity = rigid
+  double play = 0;                                               ///< full width [rad]
+  double turns_from = not_given, turns_to = not_given;           ///< elevation range [rad]
+  double mass = 0;                                               ///< on the drive pylon's head [kg]
+  double friction = 0;                                           ///< torque of all bearings of the row [N m]
+};
+
+struct SensorInput {
+  std::string kind = "inclinometer";  ///< | "encoder" | "sun"
+  std::string at = "tube beside the drive";
+  std::string correction = "sensor";  ///< | "none" | "row-mean"
+};
+
+struct SiteInput {
+  double altitude = not_given;  ///< [m]
+  std::string terrain;          ///< "EN 0" .. "EN IV", "ASCE B|C|D", "power law"
+  double orography = 1.0;
+  double power_exponent = not_given, turbulence = not_given;
+  double air_density = not_given, temperature = not_given, pressure = not_given;
+  int asce_edition = 16;
+};
+
+/// One stated wind; averaging in seconds.
+struct WindStateInput {
+  bool given = false;
+  double speed = not_given, averaging = not_given, height = not_given, pressure = not_given;
+};
+
+struct YearInput {
+  bool given = false;
+  double weibull_scale = not_given, weibull_shape = not_given, averaging = not_given, height = not_given;
+  std::string hours;  ///< "daylight" | "all"
+};
+
+struct WindInput {
+  std::string table;  ///< name of a shipped table or path of a user's
+  std::string zone;   ///< no default
+  WindStateInput operate, turning, stow, stuck;
+  YearInput year;
+  double dynamic_factor = 1.0;
+  bool size_factor = true;          ///< EN size factor for drive and foundation
+  double moment_slope = not_given;  ///< overrides dCm/dp of the table [1/rad]
+};
+
+struct AnemometerInput {
+  double height = not_given, averaging = not_given, tolerance = 0;
+};
+
+struct OperationInput {
+  double track_from = not_given, track_to = not_given;  ///< elevation [rad]
+  double stow_at = not_given, stow_within = not_given;  ///< [rad]
+  double turning_rate = not_given;                      ///< [rad/s]
+  AnemometerInput anemometer;
+};
+
+struct OpticsInput {
+  double set_true = not_given;         ///< elevation at which the panels are set on the loaded frame [rad]
+  std::string set_true_word;           ///< "unloaded"; then set_true is NaN
+  double sun = 2.6e-3;                 ///< rms of a Gaussian sun [rad]
+  std::string sun_shape = "gaussian";  ///< | "pillbox" | "buie"
+  double circumsolar_ratio = not_given;
+  double workshop_slope = not_given;  ///< rms of the mirror normal, transverse [rad]
+  double mirror_scatter = 0;          ///< rms of the reflected ray [rad]
+  double tracking = 0;                ///< rms of the collector's aim [rad]
+  double incidence = 0;               ///< longitudinal incidence angle the light is judged at [rad]
+};
+
+/// NaN or empty = reported, not judged.
+struct LimitsInput {
+  double intercept = not_given;        ///< least light caught, row mean [-]
+  double lost_to_frame = not_given;    ///< most light lost to the bent frame, against undeformed [-]
+  double slope = not_given;            ///< residual slope rms [rad]
+  double twist = not_given;            ///< greatest module twist against the sensor [rad]
+  double receiver_shift = not_given;   ///< [m]
+  std::string strength;                ///< "EN 1990" | "ASCE 7" | "" ; or
+  double strength_factor = not_given;  ///< plain factor on yield, unfactored actions [-]
+};
+
+struct AcceptInput {
+  std::string rule, because;
+};
+
+struct TroughDesign {
+  std::string name;
+  ParabolaInput parabola;
+  RowInput row;
+  TubeInput tube;
+  RibsInput ribs;
+  PurlinsInput purlins;
+  EndPlatesInput end_plates;
+  MirrorInput mirror;
+  ReceiverInput receiver;
+  CounterweightsInput counterweights;
+  PylonsInput pylons;
+  DriveInput drive;
+  SensorInput sensor;
+  SiteInput site;
+  WindInput wind;
+  OperationInput operation;
+  OpticsInput optics;
+  LimitsInput limits;
+  std::vector<AcceptInput> accepted;
+
+  std::map<std::string, Basis> basis;  ///< element path ("receiver/posts") -> how it is known
+};
+
+}  // namespace focalframe::models
