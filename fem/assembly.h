@@ -28,7 +28,12 @@ Eigen::MatrixXd assemble_fixed_end_forces(const Frame& frame, const std::vector<
 struct FreedomMap {
   SparseMatrix map;       ///< (6 #nodes) x #kept
   Eigen::VectorXd shift;  ///< imposed displacements, (6 #nodes)
+  std::vector<int> kept;  ///< column -> the full freedom that it is
 };
+/// Throws std::invalid_argument when supports and joints contradict each other, and Mechanism never.
 FreedomMap freedom_map(const Frame& frame);
+/// The same, but the full freedoms in `masters` are never eliminated by a joint. Throws std::invalid_argument
+/// when a support fixes one of them or a joint holds two of them together.
+FreedomMap freedom_map(const Frame& frame, const std::vector<int>& masters);
 
 }  // namespace focalframe::fem

@@ -99,9 +99,11 @@ struct FrameFault {
 };
 
 /// Index out of range, zero-length member, `up` parallel to its member, non-positive section values, joints
-/// between separated nodes, duplicate members, coincident unconnected nodes, unconnected parts. Empty =
-/// sound.
+/// between separated nodes, duplicate members, coincident unconnected nodes, parts that are neither connected
+/// with the rest nor held by a support or ground spring. Empty = sound.
 std::vector<FrameFault> find_faults(const Frame& frame);
+/// The same for a frame that will also be held at some nodes (condensation).
+std::vector<FrameFault> find_faults(const Frame& frame, const std::vector<int>& held_nodes);
 
 /// Mass of the frame and its centre, members and point masses [kg], [m].
 struct MassSummary {
