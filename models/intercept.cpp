@@ -122,7 +122,7 @@ double TroughIntercept::at(int row_index, double miss) const {
   const double last = static_cast<double>(row.knots - 1);
   // Written so that a NaN miss stays NaN and is not clamped into a plausible number.
   const double t = std::clamp((std::abs(miss) - row.from) * row.per_step, 0.0, last);
-  if (!(t >= 0)) return t;
+  if (!(t < last)) return std::isnan(t) ? t : 0;
   const std::size_t i = std::min(static_cast<std::size_t>(t), row.knots - 2);
   const Knot *a = &knots_[row.first + i], *b = a + 1;
   const double s = t - static_cast<double>(i);
