@@ -1,0 +1,300 @@
+#include "models/assess.h"
+
+#include <algorithm>
+#include <cmath>
+
+#include "fem/units.h"
+#include "loads/pose.h"
+#include "models/judgement.h"
+#include "models/trough.h"
+
+namespace focalframe::models {
+namespace {
+
+using Eigen::MatrixXd;
+using Eigen::VectorXd;
+
+// Half width of the secant that gives dCm/dp for the twist feedback.
+constexpr double slope_half_width = 7.5 * deg;
+
+class Check {
+ public:
+  Check(const TroughDesign& design, const loads::CoefficientTable& table, int refine)
+      : d_(design),
+        table_(table),
+        row_(build_trough(design, refine), table.stations),
+        optics_(row_, design),
+        strength_(row_, strength_rule(design.limits)),
+        winds_(winds_at_axis(design)),
+        zone_(loads::zone_factors(design.wind.zone).value_or(loads::ZoneFactors{})) {}
+
+  Assessment run() {
+    describe();
+    double pose_at = not_given;
+    PoseModel pose;
+    const std::vector<State> states = asked_states(d_);
+    for (const State& state : states) {
+      if (!(state.elevation == pose_at)) {
+        pose = row_.pose(state.elevation);
+        pose_at = state.elevation;
+      }
+      if (state.kind == StateKind::operate) look(pose, state);
+      load(pose, state);
+    }
+    out_.strength = strength_.result();
+    finish_optics();
+    prove();
+    return std::move(out_);
+  }
+
+  /// Residual slope and intercept of one optical row again (for the discretisation check).
+  OpticalResult again(const OpticalRow& row) {
+    const PoseModel pose = row_.pose(row.state.elevation);
+    return optics_.look(
+        pose,
+        row.calm ? weight_amplitudes(row_, row.state.elevation)
+                 : weight_amplitudes(row_, row.state.elevation) + mean_wind(pose, row.state, row.spread),
+        true);
+  }
+
+ private:
+  void describe() {
+    const Collector& c = row_.collector();
+    const Parabola parabola{c.width, c.focal_length};
+    out_.name = d_.name;
+    out_.aperture = c.width;
+    out_.length = d_.row.modules * d_.row.module_length;
+    out_.focal_length = c.focal_length;
+    out_.rim_angle = parabola.rim_angle();
+    out_.axis_to_vertex = c.axis_to_vertex;
+    out_.mirror_area = c.mirror_area;
+    out_.mass = row_.body_mass;
+    out_.mass_per_area = row_.body_mass / c.mirror_area;
+    out_.stand_mass = 0;
+    for (const Stand& stand : c.stands) out_.stand_mass += fem::total_mass(stand.frame).mass;
+    out_.centre_below_axis = -(row_.body_centre.z() + c.axis_to_vertex);
+    out_.weight_torque = row_.body_mass * standard_gravity * std::abs(out_.centre_below_axis);
+    const CounterweightsInput& cw = d_.counterweights;
+    if (cw.per_module > 0) {
+      const TroughLayout at = lay_out(d_);
+      const double lever = cw.behind_tube + at.tube_to_vertex - c.axis_to_vertex;
+      // Moment of everything else about the axis, carried by the counterweights at their lever.
+      const double number = cw.per_module * d_.row.modules;
+      const double rest = -row_.body_mass * out_.centre_below_axis + number * cw.mass * lever;
+      if (lever > 0 && rest > 0) out_.balancing_counterweight = rest / (number * lever);
+    }
+    out_.undeformed = optics_.undeformed();
+    out_.beam_rms = total_rms(optics_.beam());
+    out_.freedoms = c.body.freedoms();
+    out_.table = table_.name;
+    out_.table_title = table_.title;
+    out_.table_confidence = table_.confidence;
+    out_.table_source = table_.source;
+    out_.zone = d_.wind.zone;
+    out_.rule = strength_rule(d_.limits).text;
+    for (StateKind kind : {StateKind::operate, StateKind::turning, StateKind::stow, StateKind::stuck}) {
+      const loads::WindAtHeight& wind = winds_.of(kind);
+      if (!std::isnan(wind.height)) out_.winds.push_back({kind, wind, size_factor(wind)});
+    }
+  }
+
+  double size_factor(const loads::WindAtHeight& wind) const {
+    if (!d_.wind.size_factor) return 1;
+    return loads::size_factor(out_.length, out_.aperture, wind.height, wind.turbulence, site_of(d_.site));
+  }
+
+  loads::Coefficients in_zone(const loads::Coefficients& c) const {
+    return {c.Ca * zone_.Ca, c.Cs * zone_.Cs, c.Cm * zone_.Cm};
+  }
+
+  double moment_slope(double pitch) const {
+    if (!std::isnan(d_.wind.moment_slope)) return d_.wind.moment_slope;
+    return zone_.Cm * loads::moment_slope(table_, pitch, slope_half_width);
+  }
+
+  // The first pattern is the table's own profile where it has one.
+  std::vector<Spread> spreads(double pitch) const {
+    const bool own = !loads::profile_at(table_, pitch).empty();
+    return {own ? Spread::profile : Spread::linear, Spread::edge};
+  }
+
+  WindOnRow wind_on_row(const State& state, Spread spread, double offset, bool upper, double pressure) const {
+    const double pitch =
+        loads::wrap_angle(loads::pitch_seen_by_wind(state.elevation, state.wind_from) + offset);
+    WindOnRow wind;
+    wind.wind_from = state.wind_from;
+    wind.coefficients = in_zone(loads::coefficients_at(table_, pitch, upper).value());
+    wind.spread = spread;
+    if (spread == Spread::profile) {
+      wind.profile = loads::profile_at(table_, pitch, upper);
+      for (double& p : wind.profile) p *= zone_.Ca;
+      if (wind.profile.empty()) wind.spread = Spread::linear;
+    }
+    wind.moment_slope = moment_slope(pitch);
+    wind.pressure = pressure;
+    return wind;
+  }
+
+  // Everything the wind adds to the weight, twist feedback included.
+  VectorXd wind_part(const PoseModel& pose, const WindOnRow& wind) {
+    const VectorXd weight = weight_amplitudes(row_, pose.elevation);
+    const VectorXd unit = wind_amplitudes(row_, pose.elevation, wind);
+    compare_totals(unit, wind);
+    VectorXd both = weight + wind.pressure * unit;
+    add_twist_feedback(row_, pose, wind, both);
+    return both - weight;
+  }
+
+  VectorXd mean_wind(const PoseModel& pose, const State& state, Spread spread) {
+    return wind_part(pose, wind_on_row(state, spread, 0, false, winds_.of(state.kind).mean_pressure));
+  }
+
+  void look(const PoseModel& pose, const State& state) {
+    const VectorXd weight = weight_amplitudes(row_, state.elevation);
+    if (state.wind_from == 0)
+      out_.optics.push_back({state, true, Spread::linear, optics_.look(pose, weight, true)});
+    for (Spread spread : spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from)))
+      out_.optics.push_back(
+          {state, false, spread, optics_.look(pose, weight + mean_wind(pose, state, spread), true)});
+  }
+
+  void load(const PoseModel& pose, const State& state) {
+    const loads::WindAtHeight& wind = winds_.of(state.kind);
+    const bool peak = table_.kind == loads::CoefficientKind::peak;
+    const double pressure = peak ? wind.mean_pressure : wind.gust_pressure;
+    const double tolerance = state.kind == StateKind::operate || std::isnan(d_.operation.stow_within)
+                                 ? 0
+                                 : d_.operation.stow_within;
+    // The stow tolerance is already swept as poses of its own; elsewhere it widens the gust angle.
+    const double spread_angle = turbulence_angle + (state.kind == StateKind::stow ? 0 : tolerance);
+    StateLoads loads_here;
+    loads_here.state = state;
+    loads_here.weight = weight_amplitudes(row_, state.elevation);
+    loads_here.gathered = size_factor(wind) * d_.wind.dynamic_factor;
+    loads_here.friction = d_.drive.friction;
+    std::vector<VectorXd> columns;
+    const double pitch = loads::pitch_seen_by_wind(state.elevation, state.wind_from);
+    for (double offset : {-spread_angle, 0.0, spread_angle})
+      for (Spread spread : spreads(pitch)) {
+        columns.push_back(wind_part(pose, wind_on_row(state, spread, offset, true, pressure)));
+        loads_here.spread.push_back(spread);
+      }
+    loads_here.wind.resize(row_.columns().all(), static_cast<int>(columns.size()));
+    for (std::size_t i = 0; i < columns.size(); ++i) loads_here.wind.col(static_cast<int>(i)) = columns[i];
+    strength_.add(pose, loads_here);
+
+    const double divergence = divergence_pressure(row_, pose, moment_slope(pitch));
+    const double speed = std::sqrt(2 * divergence / wind.density);
+    const double used = wind.mean_speed / speed;
+    if (std::isnan(out_.divergence_speed) || used > divergence_used_) {
+      divergence_used_ = used;
+      out_.divergence_speed = speed;
+      out_.divergence_state = state;
+    }
+    note_moment(loads_here, pressure);
+  }
+
+  // Effective moment coefficient about the rotation axis of the whole row, for the line beside the drive's
+  // rating.
+  void note_moment(const StateLoads& loads_here, double pressure) {
+    const double scale = pressure * out_.aperture * row_.collector().mirror_area;
+    for (int v = 0; v < loads_here.wind.cols(); ++v) {
+      const double moment =
+          row_.load_totals().row(2).dot(loads_here.wind.col(v).head(row_.columns().body())) *
+          loads_here.gathered;
+      if (std::isnan(out_.row_moment_coefficient) || std::abs(moment) / scale > out_.row_moment_coefficient)
+        out_.row_moment_coefficient = std::abs(moment) / scale;
+    }
+  }
+
+  // Nodal loads of the pressure columns against A C, per pascal, both forces and the moment about the axis.
+  void compare_totals(const VectorXd& unit, const WindOnRow& wind) {
+    VectorXd pressures = unit.head(row_.columns().body());
+    pressures[Columns::receiver_y] = pressures[Columns::receiver_z] = 0;
+    const Eigen::Vector3d have = row_.load_totals() * pressures;
+    const double side = loads::upwind_side(wind.wind_from), area = row_.collector().mirror_area;
+    const double y = -side * wind.coefficients.Cs * area, z = -wind.coefficients.Ca * area;
+    // From the vertex to the axis by statics: the axis lies axis_to_vertex behind the vertex.
+    const double moment =
+        side * wind.coefficients.Cm * area * out_.aperture - row_.collector().axis_to_vertex * y;
+    const double scale = area * std::max(0.01, std::hypot(wind.coefficients.Ca, wind.coefficients.Cs));
+    const double error =
+        std::max({std::abs(have[0] - y), std::abs(have[1] - z), std::abs(have[2] - moment) / out_.aperture}) /
+        scale;
+    if (!(error <= out_.proof.load_error)) out_.proof.load_error = error;
+  }
+
+  void finish_optics() {
+    for (std::size_t i = 0; i < out_.optics.size(); ++i)
+      if (out_.worst_light < 0 ||
+          out_.optics[i].result.intercept <
+              out_.optics[static_cast<std::size_t>(out_.worst_light)].result.intercept)
+        out_.worst_light = static_cast<int>(i);
+  }
+
+  void prove() {
+    out_.proof.residual = row_.residual;
+    out_.proof.condition = row_.condition;
+    State state{StateKind::operate, d_.operation.track_from, 0};
+    Spread spread = Spread::linear;
+    if (out_.worst_light >= 0) {
+      state = out_.optics[static_cast<std::size_t>(out_.worst_light)].state;
+      spread = out_.optics[static_cast<std::size_t>(out_.worst_light)].spread;
+    } else {
+      const std::vector<State> states = asked_states(d_);
+      if (states.empty()) return;
+      state = states.front();
+    }
+    const double pressure = winds_.of(state.kind).mean_pressure;
+    const WindOnRow wind = wind_on_row(state, spread, 0, false, pressure);
+    const PoseModel pose = row_.pose(state.elevation);
+    const VectorXd unit = wind_amplitudes(row_, state.elevation, wind);
+    VectorXd pressures = unit.head(row_.columns().body());
+    pressures[Columns::receiver_y] = pressures[Columns::receiver_z] = 0;
+    const Eigen::Vector3d sum = row_.load_totals() * pressures;
+    out_.proof.wind_force = pressure * std::hypot(sum[0], sum[1]);
+    out_.proof.q_area_c =
+        pressure * row_.collector().mirror_area * std::hypot(wind.coefficients.Ca, wind.coefficients.Cs);
+
+    const VectorXd all = weight_amplitudes(row_, state.elevation) + wind_part(pose, wind);
+    const Eigen::Vector3d loads_sum = row_.load_totals() * all.head(row_.columns().body());
+    const VectorXd bearings = pose.bearing_force * all;
+    double y = loads_sum[0], z = loads_sum[1];
+    for (std::size_t k = 0; k < row_.collector().bearings.size(); ++k) {
+      y += bearings[RowModel::bearing_y(static_cast<int>(k))];
+      z += bearings[RowModel::bearing_y(static_cast<int>(k)) + 1];
+    }
+    // Bearings lie on the axis, so only the drive balances the moment about it.
+    const double turn = loads_sum[2] + bearings[row_.drive_turn()];
+    const double scale = std::hypot(loads_sum[0], loads_sum[1]);
+    out_.proof.balance = std::max({std::abs(y), std::abs(z), std::abs(turn) / out_.aperture}) / scale;
+  }
+
+  const TroughDesign& d_;
+  const loads::CoefficientTable& table_;
+  RowModel row_;
+  OpticsCheck optics_;
+  StrengthCheck strength_;
+  StateWinds winds_;
+  loads::ZoneFactors zone_;
+  Assessment out_;
+  double divergence_used_ = 0;
+};
+
+}  // namespace
+
+Assessment assess(const TroughDesign& design, const loads::CoefficientTable& table,
+                  const AssessOptions& options) {
+  Check check(design, table, options.refine);
+  Assessment out = check.run();
+  if (options.discretisation && out.worst_light >= 0) {
+    const OpticalRow& worst = out.optics[static_cast<std::size_t>(out.worst_light)];
+    const OpticalResult fine = Check(design, table, 2 * options.refine).again(worst);
+    out.proof.slope_change = fine.slope / worst.result.slope - 1;
+    out.proof.intercept_change = fine.intercept - worst.result.intercept;
+  }
+  judge(design, out);
+  return out;
+}
+
+}  // namespace focalframe::models

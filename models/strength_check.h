@@ -1,0 +1,94 @@
+#pragma once
+
+/// Stress, drive torque and ground reactions over all states: who is worst, where, under which wind.
+
+#include <Eigen/Core>
+#include <array>
+#include <map>
+#include <string>
+#include <vector>
+
+#include "models/row_model.h"
+#include "models/states.h"
+#include "models/wind_load.h"
+
+namespace focalframe::models {
+
+/// Factors on permanent and wind actions.
+struct ActionFactors {
+  double permanent = 1, wind = 1;
+};
+
+/// What a strength rule asks: factors per kind of state and a factor on the yield stress.
+struct StrengthRule {
+  std::string name;
+  std::vector<ActionFactors> usual, accidental;  ///< accidental: STUCK
+  double on_yield = 1;                           ///< allowed stress over yield
+  std::string text;                              ///< in words, with edition and confidence
+};
+/// "EN 1990", "ASCE 7", or the plain factor of the design; with neither given, unfactored against yield (not
+/// judged).
+StrengthRule strength_rule(const LimitsInput& limits);
+
+struct StressUse {
+  double stress = 0;   ///< von Mises bound under factored actions [Pa]
+  double allowed = 0;  ///< [Pa]; 0 = yield not known
+  double used = 0;     ///< stress / allowed
+  std::string part;    ///< member in the builder's words
+  State state;
+  Spread spread = Spread::linear;
+};
+
+struct TorqueUse {
+  double torque =
+      0;  ///< what the drive must bring about the rotation axis, unfactored, sign as the body feels it [N m]
+  State state;
+  Spread spread = Spread::linear;
+};
+
+/// Reaction of the ground on a foot, world axes: force X Y Z [N], moment X Y Z about the foot [N m].
+struct FootReaction {
+  std::array<double, 6> value{};
+  int stand = 0;
+  State state;
+};
+
+struct StrengthResult {
+  std::map<std::string, StressUse> groups;  ///< worst of each member group, "pylon" included
+  TorqueUse moving, holding;                ///< worst of OPERATE and TURNING; worst of all states
+  std::map<double, double>
+      moving_torque;  ///< greatest |torque| at each elevation of OPERATE and TURNING [rad -> N m]
+  std::array<FootReaction, 6> greatest, least;  ///< per component, unfactored
+  double least_bearing_force = 0;               ///< most negative vertical bearing force: uplift [N]
+};
+
+/// Wind columns of one state: amplitudes of weight and of every wind variant (patterns x gust angles),
+/// feedback included.
+struct StateLoads {
+  State state;
+  Eigen::VectorXd weight;
+  Eigen::MatrixXd wind;        ///< one column per variant
+  std::vector<Spread> spread;  ///< per column
+  double gathered = 1;         ///< size and dynamic factor on drive torque and reactions [-]
+  double friction = 0;         ///< torque of the bearings, added to the drive's [N m]
+};
+
+class StrengthCheck {
+ public:
+  StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {}
+  void add(const PoseModel& pose, const StateLoads& loads);
+  const StrengthResult& result() const { return result_; }
+
+ private:
+  void add_members(const PoseModel& pose, const StateLoads& loads, const std::vector<ActionFactors>& factors);
+  void add_drive(const PoseModel& pose, const StateLoads& loads);
+  void add_stands(const PoseModel& pose, const StateLoads& loads, const std::vector<ActionFactors>& factors);
+  void judge(const fem::Member& member, const fem::Frame& frame,
+             const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant);
+
+  const RowModel& row_;
+  StrengthRule rule_;
+  StrengthResult result_;
+};
+
+}  // namespace focalframe::models
