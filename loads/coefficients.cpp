@@ -39,30 +39,34 @@ Coefficients mix(const Coefficients& a, const Coefficients& b, double t) {
   return {a.Ca + t * (b.Ca - a.Ca), a.Cs + t * (b.Cs - a.Cs), a.Cm + t * (b.Cm - a.Cm)};
 }
 
+// dcp at s/W: straight lines between stations, constant beyond the outermost ones.
+double value_at(const std::vector<double>& stations, const std::vector<double>& net, double s) {
+  if (s <= stations.front()) return net.front();
+  for (std::size_t i = 1; i < stations.size(); ++i)
+    if (s <= stations[i])
+      return net[i - 1] + (s - stations[i - 1]) / (stations[i] - stations[i - 1]) * (net[i] - net[i - 1]);
+  return net.back();
+}
+
 // The profiles of a table with mirrored ones for the negative pitches it does not give itself.
-std::vector<ProfileRow> with_mirrored(const std::vector<ProfileRow>& given) {
+std::vector<ProfileRow> with_mirrored(const CoefficientTable& table) {
   double first = std::numeric_limits<double>::infinity(), last = -first;
-  for (const ProfileRow& row : given) {
+  for (const ProfileRow& row : table.profiles) {
     if (row.pitch >= 0) continue;
     first = std::min(first, row.pitch);
     last = std::max(last, row.pitch);
   }
-  std::vector<ProfileRow> all = given;
-  for (const ProfileRow& row : given) {
+  std::vector<ProfileRow> all = table.profiles;
+  for (const ProfileRow& row : table.profiles) {
     const double mirrored = -row.pitch;
     if (row.pitch <= 0 || (mirrored >= first - same_angle && mirrored <= last + same_angle)) continue;
-    all.push_back({mirrored, {row.net.rbegin(), row.net.rend()}});
+    ProfileRow added{mirrored, {}};
+    for (const double s : table.stations) added.net.push_back(value_at(table.stations, row.net, -s));
+    all.push_back(std::move(added));
   }
   std::sort(all.begin(), all.end(),
             [](const ProfileRow& a, const ProfileRow& b) { return a.pitch < b.pitch; });
   return all;
-}
-
-// Mirroring a profile in s needs the stations themselves to be symmetric.
-bool symmetric_stations(const std::vector<double>& stations) {
-  for (std::size_t i = 0; i < stations.size(); ++i)
-    if (std::abs(stations[i] + stations[stations.size() - 1 - i]) > 1e-9) return false;
-  return true;
 }
 
 }  // namespace
@@ -92,8 +96,7 @@ double moment_slope(const CoefficientTable& table, double pitch, double half_wid
 
 std::vector<double> raw_profile_at(const CoefficientTable& table, double pitch) {
   if (table.stations.empty() || table.profiles.empty()) return {};
-  const std::vector<ProfileRow> rows =
-      symmetric_stations(table.stations) ? with_mirrored(table.profiles) : table.profiles;
+  const std::vector<ProfileRow> rows = with_mirrored(table);
   const double wrapped = wrap_angle(pitch);
   std::optional<Between> at = between(rows, wrapped);
   if (!at && wrapped > pi - same_angle) at = between(rows, -pi);

@@ -31,11 +31,14 @@ Coefficients strip(double s, double ratio, bool dish) {
 constexpr std::array<double, 3> node{0.2386191860831969, 0.6612093864662645, 0.9324695142031521};
 constexpr std::array<double, 3> weight{0.4679139345726910, 0.3607615730481386, 0.1713244923791704};
 
-// Six-point Gauss. A dish's strips shrink like a square root towards the rim, which s = sin(phi) / 2 smooths.
+Coefficients plus(const Coefficients& a, const Coefficients& b) {
+  return {a.Ca + b.Ca, a.Cs + b.Cs, a.Cm + b.Cm};
+}
+
+// Six-point Gauss over x in [a, b], where s = x for a trough and s = sin(x) / 2 for a dish, which smooths the
+// square root by which a dish's strips shrink towards the rim.
 template <class Pressure>
-Coefficients gauss(double from, double to, double ratio, bool dish, const Pressure& pressure) {
-  const double a = dish ? std::asin(std::clamp(2 * from, -1.0, 1.0)) : from;
-  const double b = dish ? std::asin(std::clamp(2 * to, -1.0, 1.0)) : to;
+Coefficients gauss_panel(double a, double b, double ratio, bool dish, const Pressure& pressure) {
   Coefficients sum;
   for (std::size_t i = 0; i < node.size(); ++i) {
     for (const double side : {-1.0, 1.0}) {
@@ -44,16 +47,23 @@ Coefficients gauss(double from, double to, double ratio, bool dish, const Pressu
       const double ds = 0.5 * (b - a) * weight[i] * (dish ? 0.5 * std::cos(x) : 1.0);
       const Coefficients c = strip(s, ratio, dish);
       const double p = pressure(s) * ds;
-      sum.Ca += c.Ca * p;
-      sum.Cs += c.Cs * p;
-      sum.Cm += c.Cm * p;
+      sum = plus(sum, {c.Ca * p, c.Cs * p, c.Cm * p});
     }
   }
   return sum;
 }
 
-Coefficients plus(const Coefficients& a, const Coefficients& b) {
-  return {a.Ca + b.Ca, a.Cs + b.Cs, a.Cm + b.Cm};
+// Over s/W in [from, to]. A trough's integrand is a polynomial of degree 4 at most, a dish's is not.
+template <class Pressure>
+Coefficients gauss(double from, double to, double ratio, bool dish, const Pressure& pressure) {
+  if (!dish) return gauss_panel(from, to, ratio, dish, pressure);
+  const double a = std::asin(std::clamp(2 * from, -1.0, 1.0)), b = std::asin(std::clamp(2 * to, -1.0, 1.0));
+  const int panels = 1 + int((b - a) / 0.25);
+  Coefficients sum;
+  for (int i = 0; i < panels; ++i)
+    sum = plus(sum,
+               gauss_panel(a + (b - a) * i / panels, a + (b - a) * (i + 1) / panels, ratio, dish, pressure));
+  return sum;
 }
 
 std::vector<PressureStation> on_stations(const CoefficientTable& table, const std::vector<double>& net) {

@@ -65,9 +65,11 @@ AuthorRow to_author(double pitch, const Coefficients& c, const TableConventions&
 }
 
 std::vector<std::string> describe(const TableConventions& c) {
-  const double at90 = to_author(std::numbers::pi / 2, {}, c).angle * 180 / std::numbers::pi;
-  const double at0 = to_author(0, {}, c).angle * 180 / std::numbers::pi;
-  const double at180 = to_author(std::numbers::pi, {}, c).angle * 180 / std::numbers::pi;
+  // Adding 0 turns -0 into 0.
+  const auto degrees = [&](double pitch) {
+    return to_author(pitch, {}, c).angle * 180 / std::numbers::pi + 0.0;
+  };
+  const double at0 = degrees(0), at90 = degrees(std::numbers::pi / 2), at180 = degrees(std::numbers::pi);
   std::vector<std::string> lines{
       "wind ->    )    angle " + number_text(at0, 4) + " deg: the hollow face meets the wind",
       "wind ->   \\_/   angle " + number_text(at90, 4) + " deg: the face looks up",

@@ -135,7 +135,9 @@ void power_law_speed(WindAtHeight& w, const StatedWind& wind, const Site& site) 
            ? "as given, at the axis"
            : "not given: equal to the exponent, as in a logarithmic profile, where both are 1 / ln(z / z0)");
   const double growth = std::pow(w.height / wind.height, site.power_exponent);
-  const double mean = push_mean_at_stated(w.chain, wind, w.turbulence * growth);
+  // A given Iv belongs to the axis; the standard deviation behind it is taken as the same at the stated
+  // height.
+  const double mean = push_mean_at_stated(w.chain, wind, given ? w.turbulence * growth : w.turbulence);
   const double co = wind.over == StatedOver::site ? 1.0 : site.orography;
   w.mean_speed = push(w.chain, "mean speed at the axis", mean * growth * co, "m/s",
                       number_text(mean) + " x (" + number_text(w.height) + " / " + number_text(wind.height) +
