@@ -1,11 +1,12 @@
 #include "models/shape_fit.h"
 
-#include <Eigen/Dense>
+#include <Eigen/Core>
 #include <algorithm>
 #include <cmath>
 #include <stdexcept>
 
 #include "models/intercept.h"
+#include "models/least_squares.h"
 
 namespace focalframe::models {
 
@@ -30,20 +31,6 @@ void require_fitting_spans(const TroughSamples& s) {
                       (s.receiver_v.empty() || divides(s.receiver_v, n)) &&
                       (s.receiver_w.empty() || divides(s.receiver_w, n));
   if (!same || !shared) throw std::invalid_argument("sample arrays of a trough do not fit each other");
-}
-
-/// Least squares by singular values, so that unknowns that cannot be told apart share the answer.
-struct LeastSquares {
-  Eigen::VectorXd answer;
-  int rank = 0;
-  double condition = 0;
-};
-
-LeastSquares least_squares(const Eigen::MatrixXd& a, const Eigen::VectorXd& b) {
-  Eigen::JacobiSVD<Eigen::MatrixXd> svd(a, Eigen::ComputeThinU | Eigen::ComputeThinV);
-  svd.setThreshold(1e-10);
-  const auto& values = svd.singularValues();
-  return {svd.solve(b), static_cast<int>(svd.rank()), values(0) / values(values.size() - 1)};
 }
 
 /// The samples with their geometry looked up and their weights made to add up to 1.

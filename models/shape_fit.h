@@ -39,7 +39,7 @@ struct TroughShape {
   double tilt = none;                       ///< [rad]
   double focal_change = none;               ///< [m]
   int rank = 0;                             ///< of the height fit, 3 when all three can be told apart
-  double condition = none;                  ///< of the height fit, unknowns in m, rad, m
+  double condition = none;                  ///< of the height fit, unknowns scaled to equal effect
   double height_rms = none;                 ///< along z, after the fit [m]
 
   /// Transverse slope error at fixed y: against the design parabola where it should be; against the design

@@ -54,6 +54,20 @@ double one_side(const SunShape& sun) {
   return sum;
 }
 
+void add_rings(SunShape& sun, const Radiance& radiance, const std::vector<double>& breaks) {
+  double total = 0;
+  const int per_interval = breaks.size() > 8 ? 1 : breaks.size() > 2 ? 4 : 6;
+  for (std::size_t k = 1; k < breaks.size(); ++k) {
+    const Quadrature rule = gauss_legendre(per_interval, breaks[k - 1], breaks[k]);
+    for (std::size_t i = 0; i < rule.point.size(); ++i) {
+      sun.ring_angle.push_back(rule.point[i]);
+      sun.ring_share.push_back(rule.weight[i] * rule.point[i] * radiance(rule.point[i]));
+      total += sun.ring_share.back();
+    }
+  }
+  for (double& share : sun.ring_share) share /= total;
+}
+
 SunShape round_sun(const Radiance& radiance, const std::vector<double>& breaks, int per_interval) {
   SunShape sun;
   sun.angle = crowded(breaks, per_interval);
@@ -61,6 +75,7 @@ SunShape round_sun(const Radiance& radiance, const std::vector<double>& breaks, 
   for (const double s : sun.angle) sun.density.push_back(projected(radiance, breaks, s, unit));
   const double scale = 1 / (2 * one_side(sun));
   for (double& value : sun.density) value *= scale;
+  add_rings(sun, radiance, breaks);
   return sun;
 }
 
@@ -130,7 +145,7 @@ struct Ramps {
 
 }  // namespace
 
-SunShape gaussian_sun(double rms) { return {rms, {}, {}}; }
+SunShape gaussian_sun(double rms) { return {rms, {}, {}, {}, {}}; }
 
 SunShape pillbox_sun(double half_angle) {
   return round_sun([](double) { return 1.0; }, {0, half_angle}, 400);

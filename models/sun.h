@@ -20,6 +20,8 @@ struct SunShape {
   double gaussian_rms = 0;      ///< 1-D [rad]; 0 = a point
   std::vector<double> angle;    ///< ascending from 0 [rad]
   std::vector<double> density;  ///< B at these angles [1/rad]; twice its integral is 1
+  /// The same sun for a point focus: rings about its centre and the share of the light in each.
+  std::vector<double> ring_angle, ring_share;  ///< [rad], [-]; shares add up to 1
 };
 
 SunShape gaussian_sun(double rms);
