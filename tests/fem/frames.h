@@ -50,6 +50,9 @@ struct Builder {
   void support(int node, const Six& fix, const Vec6& imposed = Vec6::Zero()) {
     frame.supports.push_back({node, fix, imposed});
   }
+  void mass(int node, double value, const Mat3& inertia = Mat3::Zero(), const Vec3& offset = Vec3::Zero()) {
+    frame.masses.push_back({node, value, offset, inertia, "mass", ""});
+  }
   /// Members in a row along a straight line of nodes; returns all node indices.
   std::vector<int> line(const Vec3& a, const Vec3& b, int pieces, int section = 0, int material = 0,
                         const Vec3& up = Vec3::UnitZ()) {
