@@ -47,6 +47,15 @@ AsceProfile asce_profile(Terrain exposure, int edition) {
 
 constexpr double lowest_kz_height = 4.572;  // 15 ft
 
+struct GustConstant {
+  double c, lowest;
+};
+GustConstant gust_constant(Terrain exposure) {
+  if (exposure == Terrain::asce_b) return {0.30, 9.144};
+  if (exposure == Terrain::asce_c) return {0.20, 4.572};
+  return {0.15, 2.134};
+}
+
 }  // namespace
 
 bool is_en(Terrain terrain) { return terrain <= Terrain::en_4; }
@@ -146,13 +155,14 @@ std::string asce_kz_text(Terrain exposure, double height, int edition) {
 }
 
 double asce_turbulence(Terrain exposure, double height) {
-  struct Constant {
-    double c, lowest;
-  };
-  const Constant k = exposure == Terrain::asce_b   ? Constant{0.30, 9.144}
-                     : exposure == Terrain::asce_c ? Constant{0.20, 4.572}
-                                                   : Constant{0.15, 2.134};
+  const GustConstant k = gust_constant(exposure);
   return k.c * std::pow(10 / std::max(height, k.lowest), 1.0 / 6);
+}
+
+std::string asce_turbulence_text(Terrain exposure, double height) {
+  const GustConstant k = gust_constant(exposure);
+  return number_text(k.c) + " (10 / " + number_text(std::max(height, k.lowest)) + ")^(1/6)" +
+         (height < k.lowest ? ", at the lowest height of the formula" : "") + " (ASCE 7, from memory)";
 }
 
 }  // namespace focalframe::loads

@@ -46,5 +46,6 @@ std::string asce_kz_text(Terrain exposure, double height, int edition);  ///< fo
 /// Iz = c (10 m / z)^(1/6), c = 0.30, 0.20, 0.15 for B, C, D, z at least 9.14, 4.57, 2.13 m (from memory)
 /// [-].
 double asce_turbulence(Terrain exposure, double height);
+std::string asce_turbulence_text(Terrain exposure, double height);
 
 }  // namespace focalframe::loads

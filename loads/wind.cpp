@@ -70,8 +70,31 @@ double push_averaging(Chain& chain, double speed, double from, double to, GustMe
               "x " + number_text(factor.value) + " = " + factor.how);
 }
 
+// z is raised to zmin below it, and the text says so.
+std::string log_text(const EnTerrain& t, double z) {
+  return "ln(" + number_text(std::max(z, t.zmin)) + (z < t.zmin ? " [zmin]" : "") + " / " +
+         number_text(t.z0) + ")";
+}
+
+std::string turbulence_text(const Site& site, double z) {
+  if (is_asce(site.terrain)) return asce_turbulence_text(site.terrain, z);
+  if (is_en(site.terrain))
+    return "1 / (c_o ln(z / z0)) = 1 / (" + number_text(site.orography) + " " +
+           log_text(en_terrain(site.terrain), z) + ") (EN 1991-1-4, 4.4)";
+  return std::isnan(site.turbulence)
+             ? "not given: equal to the exponent, as in a logarithmic profile, where both are 1 / ln(z / z0)"
+             : "as given, at the axis";
+}
+
+double turbulence_at(double height, const Site& site) {
+  if (is_asce(site.terrain)) return asce_turbulence(site.terrain, height);
+  if (is_en(site.terrain))
+    return en_turbulence(en_terrain(site.terrain), {.height = height, .orography = site.orography});
+  return std::isnan(site.turbulence) ? site.power_exponent : site.turbulence;
+}
+
 // EN terrain and power law: the stated speed as a 10 min mean at its own height.
-double push_mean_at_stated(Chain& chain, const StatedWind& wind, double turbulence) {
+double push_mean_at_stated(Chain& chain, const StatedWind& wind, double turbulence, const std::string& how) {
   if (wind.averaging > longest_gust)
     return push_averaging(chain, wind.speed, wind.averaging, mean_averaging, wind.method, turbulence,
                           "10 min mean at " + metres(wind.height));
@@ -80,21 +103,17 @@ double push_mean_at_stated(Chain& chain, const StatedWind& wind, double turbulen
   const double ratio = en_gust_ratio(turbulence);
   return push(chain, "10 min mean at " + metres(wind.height), gust / ratio, "m/s",
               "gust / sqrt(1 + 7 Iv) = " + number_text(gust) + " / " + number_text(ratio) + ", Iv(" +
-                  metres(wind.height) + ") = " + number_text(turbulence) + " (EN 1991-1-4, 4.5)");
-}
-
-std::string log_text(const EnTerrain& t, double z) {
-  return "ln(" + number_text(std::max(z, t.zmin)) + " / " + number_text(t.z0) + ")" +
-         (z < t.zmin ? ", z raised to zmin" : "");
+                  metres(wind.height) + ") = " + (how.empty() ? "" : how + " = ") + number_text(turbulence) +
+                  " (EN 1991-1-4, 4.5)");
 }
 
 // v_b from the stated wind. Over open country the speed at 10 m is v_b by definition, though c_r(10 m) of
 // terrain II is 1.007; at other heights the ratio of c_r is used, so that nothing jumps at 10 m.
 double push_basic(Chain& chain, const StatedWind& wind, const Site& where) {
   const EnTerrain t = en_terrain(where.terrain);
-  const double iv = en_turbulence(t, {.height = wind.height, .orography = where.orography});
+  const double iv = turbulence_at(wind.height, where);
   push_stated(chain, wind, where);
-  const double mean = push_mean_at_stated(chain, wind, iv);
+  const double mean = push_mean_at_stated(chain, wind, iv, turbulence_text(where, wind.height));
   const double cr = en_roughness(t, wind.height);
   if (wind.over == StatedOver::site)
     return push(chain, "basic wind v_b", mean / (cr * where.orography), "m/s",
@@ -118,26 +137,26 @@ void en_speed(WindAtHeight& w, const StatedWind& wind, const Site& site) {
   w.mean_speed = push(w.chain, "mean speed at the axis", cr * site.orography * vb, "m/s",
                       "c_r c_o v_b = " + number_text(cr) + " x " + number_text(site.orography) + " x " +
                           number_text(vb) + " (10 min)");
-  w.turbulence = push(w.chain, "turbulence intensity Iv",
-                      en_turbulence(t, {.height = w.height, .orography = site.orography}), "-",
-                      "1 / (c_o " + log_text(t, w.height) + ") (EN 1991-1-4, 4.4, k_I = 1)");
+  w.turbulence = push(w.chain, "turbulence intensity Iv", turbulence_at(w.height, site), "-",
+                      turbulence_text(site, w.height));
 }
 
 void power_law_speed(WindAtHeight& w, const StatedWind& wind, const Site& site) {
   require(site.power_exponent > 0 && site.power_exponent < 0.6,
           "power-law exponent " + number_text(site.power_exponent) + " must lie between 0 and 0.6");
   const bool given = !std::isnan(site.turbulence);
-  w.turbulence = given ? site.turbulence : site.power_exponent;
+  w.turbulence = turbulence_at(w.height, site);
   require(w.turbulence >= 0 && w.turbulence < 1, "turbulence intensity must lie between 0 and 1");
   push_stated(w.chain, wind, site);
-  push(w.chain, "turbulence intensity Iv", w.turbulence, "-",
-       given
-           ? "as given, at the axis"
-           : "not given: equal to the exponent, as in a logarithmic profile, where both are 1 / ln(z / z0)");
+  push(w.chain, "turbulence intensity Iv", w.turbulence, "-", turbulence_text(site, w.height));
   const double growth = std::pow(w.height / wind.height, site.power_exponent);
   // A given Iv belongs to the axis; the standard deviation behind it is taken as the same at the stated
   // height.
-  const double mean = push_mean_at_stated(w.chain, wind, given ? w.turbulence * growth : w.turbulence);
+  const double mean =
+      push_mean_at_stated(w.chain, wind, given ? w.turbulence * growth : w.turbulence,
+                          given ? "Iv at the axis x (" + number_text(w.height) + " / " +
+                                      number_text(wind.height) + ")^" + number_text(site.power_exponent)
+                                : "");
   const double co = wind.over == StatedOver::site ? 1.0 : site.orography;
   w.mean_speed = push(w.chain, "mean speed at the axis", mean * growth * co, "m/s",
                       number_text(mean) + " x (" + number_text(w.height) + " / " + number_text(wind.height) +
@@ -168,8 +187,7 @@ void asce_speed(WindAtHeight& w, const StatedWind& wind, const Site& site) {
   w.gust_speed = push(w.chain, "gust speed at the axis", basic * std::sqrt(kz) * site.orography, "m/s",
                       number_text(basic) + " x sqrt(Kz) x " + number_text(site.orography) +
                           " (sqrt(Kzt)); the code's directionality factor is not applied");
-  w.turbulence =
-      push(w.chain, "turbulence intensity Iz", iz, "-", "c (10 m / z)^(1/6) (ASCE 7, from memory)");
+  w.turbulence = push(w.chain, "turbulence intensity Iz", iz, "-", turbulence_text(site, w.height));
   w.mean_speed = push_averaging(w.chain, w.gust_speed, gust_averaging, mean_averaging, wind.method, iz,
                                 "mean speed at the axis");
 }
@@ -189,18 +207,10 @@ void push_en_gust(WindAtHeight& w) {
                       "mean x sqrt(1 + 7 Iv) (3 s)");
 }
 
-double turbulence_at_axis(double height, const Site& site) {
-  if (is_asce(site.terrain)) return asce_turbulence(site.terrain, height);
-  if (is_en(site.terrain))
-    return en_turbulence(en_terrain(site.terrain), {.height = height, .orography = site.orography});
-  return std::isnan(site.turbulence) ? site.power_exponent : site.turbulence;
-}
-
 // A pressure is stated at the axis itself: only its averaging has to be changed.
 void from_pressure(WindAtHeight& w, const StatedWind& wind, const Site& site) {
-  const double iv = turbulence_at_axis(w.height, site);
-  w.turbulence = push(w.chain, "turbulence intensity Iv", iv, "-",
-                      terrain_name(site.terrain) + " at " + metres(w.height));
+  const double iv = turbulence_at(w.height, site);
+  w.turbulence = push(w.chain, "turbulence intensity Iv", iv, "-", turbulence_text(site, w.height));
   push(w.chain, "stated velocity pressure", wind.pressure, "Pa",
        "at the axis, from a mean over " + number_text(wind.averaging) + " s");
   const double speed = push(w.chain, "speed of that pressure", std::sqrt(2 * wind.pressure / w.density),
@@ -214,7 +224,7 @@ void from_pressure(WindAtHeight& w, const StatedWind& wind, const Site& site) {
     w.mean_speed = push_averaging(w.chain, w.gust_speed, gust_averaging, mean_averaging, wind.method, iv,
                                   "mean speed at the axis");
   } else {
-    w.mean_speed = push_mean_at_stated(w.chain, at_axis, iv);
+    w.mean_speed = push_mean_at_stated(w.chain, at_axis, iv, "");
   }
 }
 
