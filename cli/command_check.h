@@ -1,0 +1,25 @@
+#pragma once
+
+/// `focalframe check`: the main job.
+
+#include <string>
+
+#include "cli/design_file.h"
+#include "models/design.h"
+
+namespace focalframe::cli {
+
+struct CheckOptions {
+  std::string design_path;  ///< as given on the command line
+  std::string design_text;  ///< the file's text, to make a hash from
+  std::string json_path;    ///< empty = no JSON
+  bool quiet = false;       ///< verdict line only
+  bool verbose = false;
+  bool strict = false;  ///< what was not judged and what was warned about counts as missed
+  int warnings = 0;     ///< WARN messages already printed about the design
+};
+
+/// The design is sound (no STOP). Prints the report on standard output, writes JSON, returns the exit code.
+int run_trough_check(const models::TroughDesign& design, const Lines& lines, const CheckOptions& options);
+
+}  // namespace focalframe::cli

@@ -1,0 +1,63 @@
+#include "cli/commands.h"
+
+#include <iostream>
+
+#include "cli/command_check.h"
+#include "cli/command_frame.h"
+#include "cli/design_file.h"
+#include "cli/exit_code.h"
+#include "cli/write_file.h"
+
+namespace focalframe::cli {
+namespace {
+
+Message about_file(const std::string& path, std::string text) {
+  Message m;
+  m.file = path;
+  m.text = std::move(text);
+  return m;
+}
+
+// Reads the design and says what is wrong with it; false = the run is over.
+bool read_sound(const DesignCommand& command, DesignFile& design) {
+  if (!command.json_path.empty())
+    if (const std::string refusal = refuse_result_path(command.json_path, command.design); !refusal.empty()) {
+      design.messages = {about_file(command.json_path, refusal)};
+      std::cerr << to_text(design.messages, true);
+      return false;
+    }
+  design = read_design(command.design);
+  if (!design.sound() || !command.quiet) std::cerr << to_text(design.messages, command.verbose);
+  return design.sound();
+}
+
+int warnings_in(const DesignFile& design) {
+  int count = 0;
+  for (const Message& m : design.messages) count += m.level == Level::warn ? 1 : 0;
+  return count;
+}
+
+}  // namespace
+
+int run_check(const DesignCommand& command) {
+  DesignFile design;
+  if (!read_sound(command, design)) return exit_code(design.messages);
+  if (design.kind == "frame") return run_frame_check(design, command);
+  CheckOptions options;
+  options.design_path = command.design;
+  options.design_text = design.text;
+  options.json_path = command.json_path;
+  options.quiet = command.quiet;
+  options.verbose = command.verbose;
+  options.strict = command.strict;
+  options.warnings = warnings_in(design);
+  return run_trough_check(design.trough, design.lines, options);
+}
+
+int run_modes(const DesignCommand& command) {
+  DesignFile design;
+  if (!read_sound(command, design)) return exit_code(design.messages);
+  return run_frame_modes(design, command);
+}
+
+}  // namespace focalframe::cli

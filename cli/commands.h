@@ -1,0 +1,33 @@
+#pragma once
+
+/// What each sub-command does once its words are understood. All return an exit code.
+
+#include <string>
+#include <vector>
+
+namespace focalframe::cli {
+
+struct DesignCommand {
+  std::string design;     ///< path
+  std::string json_path;  ///< empty = none
+  bool quiet = false, verbose = false, strict = false;
+  int count = 6;  ///< `modes` only: how many
+};
+
+struct DraftCommand {
+  std::string kind, file;  ///< kind: trough | frame | xsd
+  bool every_field = false;
+  /// Sizes as typed, by option name ("aperture"); only those given.
+  std::vector<std::pair<std::string, std::string>> sizes;
+};
+
+int run_check(const DesignCommand& command);
+int run_modes(const DesignCommand& command);
+int run_draft(const DraftCommand& command);
+/// Lists the shipped coefficient tables, or shows one (name or path).
+int run_tables(const std::string& name);
+
+/// Options of `draft trough` that take a size.
+const std::vector<std::string>& draft_size_options();
+
+}  // namespace focalframe::cli
