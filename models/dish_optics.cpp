@@ -15,6 +15,16 @@ using Eigen::Vector3d;
 
 double normal_cumulative(double x) { return std::erfc(-x / std::numbers::sqrt2) / 2; }
 
+/// Mean over a unit Gaussian, exact for polynomials of degree 9 (closed form).
+struct Hermite {
+  double point, weight;
+};
+constexpr Hermite hermite[] = {{0, 8.0 / 15},
+                               {1.355626179974266, 0.2220759220056126},
+                               {-1.355626179974266, 0.2220759220056126},
+                               {2.856970013872806, 0.01125741132772069},
+                               {-2.856970013872806, 0.01125741132772069}};
+
 const Quadrature& chord_rule() {
   static const Quadrature rule = gauss_legendre(64, 0, 1);
   return rule;
@@ -66,32 +76,41 @@ DishIntercept::DishIntercept(const Parabola& parabola, double receiver_radius, c
     throw std::invalid_argument("diameter, focal length and receiver radius must be > 0");
   if (error.incidence != 0 || error.longitudinal_slope_rms != 0)
     throw std::invalid_argument("a dish has no incidence angle and no longitudinal slope error");
-  sun_.push_back({0, 0, 1});
-  if (error.sun.angle.empty()) return;
-  sun_.clear();
-  constexpr int around = 12;
-  for (std::size_t k = 0; k < error.sun.ring_angle.size(); ++k)
-    for (int i = 0; i < around; ++i) {
-      const double angle = 2 * std::numbers::pi * (i + 0.5) / around, ring = error.sun.ring_angle[k];
-      sun_.push_back({ring * std::cos(angle), ring * std::sin(angle), error.sun.ring_share[k] / around});
-    }
+  // Tangential slope errors count least at the rim; what exceeds that is not round.
+  const double least = 2 * error.slope_rms * std::cos(parabola.slope_angle(parabola.width / 2));
+  round_rms_ = std::hypot(least, error.scatter_rms, error.tracking_rms);
+  if (error.sun.angle.empty())
+    round_rms_ = std::hypot(round_rms_, error.sun.gaussian_rms);
+  else
+    beam_.emplace(error.sun, round_rms_);
 }
 
 double DishIntercept::at(double rho, const DishMiss& miss) const {
   const double psi = parabola_.ray_angle(rho), p = parabola_.local_focal_distance(rho);
   const double steep = std::cos(psi);
-  if (kind_ == PointReceiver::flat && !(steep > 1e-6)) return 0;
-  const double lean = kind_ == PointReceiver::flat ? steep : 1;
-  const double far = p + (kind_ == PointReceiver::flat ? miss.rise / steep : miss.rise * steep);
-  const double others = std::hypot(error_.scatter_rms, error_.tracking_rms);
-  const double round = std::hypot(error_.sun.angle.empty() ? error_.sun.gaussian_rms : 0, others);
-  const double radial_rms = std::hypot(2 * error_.slope_rms, round) * far / lean;
-  const double tangential_rms = std::hypot(2 * error_.slope_rms * std::cos(psi / 2), round) * far;
+  const bool flat = kind_ == PointReceiver::flat;
+  if (flat && !(steep > 1e-6)) return 0;
+  const double lean = flat ? steep : 1, far = p + (flat ? miss.rise / steep : miss.rise * steep);
+  // The receiver as the mirror point sees it: an ellipse of angles.
+  const double radial = miss.radial / far, tangential = miss.tangential / far;
+  const double semi_radial = radius_ * lean / far, semi_tangential = radius_ / far;
+  const double rim_cosine = std::cos(parabola_.slope_angle(parabola_.width / 2)), cosine = std::cos(psi / 2);
+  const double slope = 4 * error_.slope_rms * error_.slope_rms;
+  const double more_radial = std::max(0.0, slope * (1 - rim_cosine * rim_cosine));
+  const double more_tangential = std::max(0.0, slope * (cosine * cosine - rim_cosine * rim_cosine));
+  if (!beam_) {
+    const double round = round_rms_ * round_rms_;
+    return spot_inside_circle(radius_, miss.radial / lean, miss.tangential,
+                              std::sqrt(round + more_radial) * far / lean,
+                              std::sqrt(round + more_tangential) * far);
+  }
   double sum = 0;
-  for (const Offset& part : sun_)
-    sum +=
-        part.share * spot_inside_circle(radius_, (miss.radial + part.radial * far) / lean,
-                                        miss.tangential + part.tangential * far, radial_rms, tangential_rms);
+  for (const Hermite& a : hermite)
+    for (const Hermite& b : hermite)
+      sum += a.weight * b.weight *
+             beam_->inside_ellipse(radial + a.point * std::sqrt(more_radial),
+                                   tangential + b.point * std::sqrt(more_tangential), semi_radial,
+                                   semi_tangential);
   return sum;
 }
 

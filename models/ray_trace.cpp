@@ -1,11 +1,8 @@
 #include "models/ray_trace.h"
 
-#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 #include <memory>
-#include <numbers>
-#include <random>
 #include <stdexcept>
 
 namespace focalframe::models {
@@ -13,23 +10,6 @@ namespace focalframe::models {
 namespace {
 
 using Eigen::Vector3d;
-
-/// Standard distributions differ between libraries; the engine does not.
-class Chance {
- public:
-  explicit Chance(std::uint64_t seed) : engine_(seed) {}
-
-  /// Inside (0, 1).
-  double uniform() { return (static_cast<double>(engine_() >> 11) + 0.5) * 0x1p-53; }
-
-  double normal() {
-    const double radius = std::sqrt(-2 * std::log(uniform()));
-    return radius * std::cos(2 * std::numbers::pi * uniform());
-  }
-
- private:
-  std::mt19937_64 engine_;
-};
 
 /// Draws the sun's offset across the trough from its line profile.
 class SunOffset {
@@ -57,12 +37,6 @@ class SunOffset {
   std::vector<double> share_;
 };
 
-Vector3d turned(const Vector3d& vector, const Vector3d& rotation) {
-  const double angle = rotation.norm();
-  if (angle == 0) return vector;
-  return Eigen::AngleAxisd(angle, rotation / angle) * vector;
-}
-
 /// Direction of the light: incidence along the row, then the sun's own width, then aim and tracking.
 Vector3d incoming(const TracedTrough& trough, const SunOffset& sun, Chance& chance) {
   const double theta = trough.error.incidence;
@@ -77,12 +51,6 @@ Vector3d mirror_normal(const TracedTrough& trough, double y, const SkinMotion& m
   const Vector3d workshop = trough.error.slope_rms * chance.normal() * Vector3d::UnitX() +
                             trough.error.longitudinal_slope_rms * chance.normal() * across;
   return turned(turned(ideal, workshop), motion.rotation);
-}
-
-Vector3d scattered(const Vector3d& ray, double rms, Chance& chance) {
-  if (rms == 0) return ray;
-  const Vector3d a = ray.cross(Vector3d::UnitX()).normalized(), b = ray.cross(a);
-  return (ray + rms * (chance.normal() * a + chance.normal() * b)).normalized();
 }
 
 bool meets_receiver(const TracedTrough& trough, const Vector3d& from, const Vector3d& ray,
@@ -101,8 +69,7 @@ bool caught(const TracedTrough& trough, const SunOffset& sun, Chance& chance) {
   const Vector3d point = Vector3d(x, y, trough.parabola.height(y)) + motion.displacement;
   const Vector3d light = incoming(trough, sun, chance);
   const Vector3d normal = mirror_normal(trough, y, motion, chance);
-  const Vector3d mirrored = light - 2 * light.dot(normal) * normal;
-  const Vector3d ray = scattered(mirrored, trough.error.scatter_rms, chance);
+  const Vector3d ray = scattered(reflected(light, normal), trough.error.scatter_rms, chance);
   Vector3d receiver(x, 0, trough.parabola.focal_length);
   if (trough.receiver) receiver += trough.receiver(x);
   return meets_receiver(trough, point, ray, receiver);
@@ -161,18 +128,7 @@ TracedIntercept trace_rays(const TracedTrough& trough, std::int64_t rays, std::u
   const SunOffset sun(trough.error.sun);
   std::int64_t hits = 0;
   for (std::int64_t k = 0; k < rays; ++k) hits += caught(trough, sun, chance) ? 1 : 0;
-  TracedIntercept result;
-  const auto n = static_cast<double>(rays);
-  const double p = static_cast<double>(hits) / n;
-  result.rays = rays;
-  result.intercept = p;
-  result.standard_error = std::sqrt(p * (1 - p) / n);
-  // Wilson's score interval stays inside 0..1 even when all rays hit; z for 95 %, two-sided.
-  const double z = 1.959964, middle = (p + z * z / (2 * n)) / (1 + z * z / n);
-  const double half = z / (1 + z * z / n) * std::sqrt(p * (1 - p) / n + z * z / (4 * n * n));
-  result.low = middle - half;
-  result.high = middle + half;
-  return result;
+  return estimate(hits, rays);
 }
 
 }  // namespace focalframe::models

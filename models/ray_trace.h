@@ -10,11 +10,11 @@
 #include <Eigen/Core>
 #include <cstdint>
 #include <functional>
-#include <limits>
 #include <span>
 #include <vector>
 
 #include "models/intercept.h"
+#include "models/rays.h"
 
 namespace focalframe::models {
 
@@ -44,14 +44,6 @@ struct TracedTrough {
   double x_from = 0, x_to = 1;  ///< mirror's ends [m]
   SkinMotionAt skin;
   ReceiverMotionAt receiver;
-};
-
-struct TracedIntercept {
-  std::int64_t rays = 0;
-  double intercept = std::numeric_limits<double>::quiet_NaN();
-  double standard_error = std::numeric_limits<double>::quiet_NaN();
-  double low = std::numeric_limits<double>::quiet_NaN();  ///< 95 % confidence interval (Wilson's)
-  double high = std::numeric_limits<double>::quiet_NaN();
 };
 
 TracedIntercept trace_rays(const TracedTrough& trough, std::int64_t rays = 1'000'000, std::uint64_t seed = 1);

@@ -17,11 +17,10 @@ inline constexpr double solar_disc_half_angle = 4.65e-3, aureole_half_angle = 43
 
 /// A sun. Gaussian when `angle` is empty; otherwise its line profile, linear between the angles given.
 struct SunShape {
-  double gaussian_rms = 0;      ///< 1-D [rad]; 0 = a point
-  std::vector<double> angle;    ///< ascending from 0 [rad]
-  std::vector<double> density;  ///< B at these angles [1/rad]; twice its integral is 1
-  /// The same sun for a point focus: rings about its centre and the share of the light in each.
-  std::vector<double> ring_angle, ring_share;  ///< [rad], [-]; shares add up to 1
+  double gaussian_rms = 0;       ///< 1-D [rad]; 0 = a point
+  std::vector<double> angle;     ///< ascending from 0 [rad]
+  std::vector<double> density;   ///< B at these angles [1/rad]; twice its integral is 1
+  std::vector<double> radiance;  ///< of the round sun at these angles from its centre, linear between
 };
 
 SunShape gaussian_sun(double rms);

@@ -7,6 +7,7 @@
 #include <numbers>
 
 #include "fem/units.h"
+#include "models/quadrature.h"
 
 // Numbers named "computed here" come from adaptive quadrature and were confirmed by an independent
 // Monte-Carlo trace of exact rays with millions of rays.
