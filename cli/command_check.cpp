@@ -1,0 +1,108 @@
+#include "cli/command_check.h"
+
+#include <unistd.h>
+
+#include <cstdio>
+#include <string>
+
+#include "cli/exit_code.h"
+#include "cli/input_hash.h"
+#include "cli/report_detail.h"
+#include "cli/report_json.h"
+#include "cli/report_text.h"
+#include "cli/shipped_tables.h"
+#include "cli/write_file.h"
+#include "fem/mechanism.h"
+#include "models/assess.h"
+#include "models/cures.h"
+#include "models/guesses.h"
+
+namespace focalframe::cli {
+namespace {
+
+Message message_of(const models::Violation& v, const Lines& lines, const std::string& file) {
+  Message m;
+  m.level = v.level == models::Violation::Level::stop   ? Level::stop
+            : v.level == models::Violation::Level::warn ? Level::warn
+                                                        : Level::note;
+  m.file = file;
+  for (const std::string& key : {v.element + "/" + v.attribute, v.element})
+    if (const auto at = lines.find(key); m.line == 0 && at != lines.end()) m.line = at->second;
+  m.head = v.element + (v.attribute.empty() ? "" : " " + v.attribute);
+  m.rule = v.rule;
+  m.text = v.text;
+  if (v.level == models::Violation::Level::stop)
+    m.advice = v.likely;
+  else
+    m.likely = v.likely;
+  return m;
+}
+
+// A line that is overwritten while a terminal waits; nothing elsewhere.
+models::Progress progress_line(const char* what, bool quiet) {
+  if (quiet || isatty(STDERR_FILENO) == 0) return {};
+  return [what](int done, int all) {
+    std::fprintf(stderr, "\r%s: %d of %d%s", what, done, all, done == all ? "\r\033[K" : "");
+    std::fflush(stderr);
+  };
+}
+
+int verdict_code(const models::Assessment& a, const CheckOptions& options, std::size_t warnings) {
+  if (a.limits_missed > 0) return criterion_failed;
+  if (options.strict && (!a.not_judged.empty() || warnings > 0)) return criterion_failed;
+  return all_met;
+}
+
+int print_problems(const std::vector<Message>& messages, bool verbose) {
+  std::fputs(to_text(messages, verbose).c_str(), stderr);
+  return exit_code(messages);
+}
+
+}  // namespace
+
+int run_trough_check(const models::TroughDesign& design, const Lines& lines, const CheckOptions& options) {
+  std::vector<Message> messages;
+  models::Violation table_place;
+  table_place.element = "wind";
+  table_place.attribute = "table";
+  Message place = message_of(table_place, lines, options.design_path);
+  place.head = "wind table=\"" + design.wind.table + "\"";
+  const auto table = find_table(design.wind.table, options.design_path, place, messages);
+  if (!table || has_stop(messages)) return print_problems(messages, options.verbose);
+  for (const models::Violation& v : models::table_gaps(design, table->table))
+    messages.push_back(message_of(v, lines, options.design_path));
+  if (has_stop(messages)) return print_problems(messages, options.verbose);
+
+  models::Assessment a;
+  try {
+    a = models::assess(design, table->table);
+  } catch (const fem::Mechanism& mechanism) {
+    Message m;
+    m.file = options.design_path;
+    m.head = "the row has no solution";
+    m.text = mechanism.what();
+    m.no_solution = true;
+    return print_problems({m}, options.verbose);
+  }
+  a.deciding_guesses =
+      models::deciding_guesses(design, table->table, a, progress_line("trying the guesses", options.quiet));
+  a.cures = models::find_cures(design, table->table, a, progress_line("trying changes", options.quiet));
+
+  for (const models::Violation& v : a.remarks) messages.push_back(message_of(v, lines, options.design_path));
+  const std::string hash = input_hash(options.design_text, table->table.name);
+  if (!options.json_path.empty())
+    if (const std::string problem = write_file(options.json_path, trough_json(a, hash)); !problem.empty()) {
+      std::fprintf(stderr, "%s\n", problem.c_str());
+      return bad_input;
+    }
+  if (options.quiet) {
+    std::fputs(verdict_line(a).c_str(), stdout);
+  } else {
+    for (const Message& m : messages) std::fputs(to_text(m).c_str(), stderr);
+    std::fputs(summary_text(a, hash).c_str(), stdout);
+    if (options.verbose) std::fputs(detail_text(a).c_str(), stdout);
+  }
+  return verdict_code(a, options, messages.size() + static_cast<std::size_t>(options.warnings));
+}
+
+}  // namespace focalframe::cli

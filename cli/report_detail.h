@@ -1,0 +1,15 @@
+#pragma once
+
+/// Everything behind the summary, for --verbose.
+
+#include <string>
+
+#include "models/assessment.h"
+
+namespace focalframe::cli {
+
+/// Axes in words, mass and balance, the wind chain step by step, optics of every pose, stresses, drive torque
+/// over elevation, ground loads, every cure, guesses, what was not checked, all cautions. ASCII, 80 columns.
+std::string detail_text(const models::Assessment& assessment);
+
+}  // namespace focalframe::cli

@@ -1,0 +1,227 @@
+#include "cli/report_json.h"
+
+#include <cmath>
+#include <nlohmann/json.hpp>
+
+namespace focalframe::cli {
+namespace {
+
+using Json = nlohmann::ordered_json;
+using models::Assessment;
+
+// A number that was not computed is null, never 0.
+Json number(double value) { return std::isfinite(value) ? Json(value) : Json(nullptr); }
+
+const char* suffix(models::Quantity q) {
+  switch (q) {
+    case models::Quantity::ratio:
+      return "ratio";
+    case models::Quantity::angle:
+      return "rad";
+    case models::Quantity::length:
+      return "m";
+    case models::Quantity::pressure:
+      return "Pa";
+    case models::Quantity::torque:
+      return "N_m";
+    case models::Quantity::force:
+      return "N";
+    case models::Quantity::speed:
+      return "m_s";
+    default:
+      return "";
+  }
+}
+
+Json state(const models::State& s) {
+  return {{"kind", models::state_text(s.kind)},
+          {"elevation_rad", s.elevation},
+          {"wind_from_rad", s.wind_from},
+          {"words", models::place_text(s)}};
+}
+
+Json criterion(const models::Criterion& c) {
+  const char* questions[] = {"focus", "together", "drive", "ground"};
+  return {{"question", questions[static_cast<int>(c.question)]},
+          {"key", c.key},
+          {"name", c.name},
+          {"unit", suffix(c.quantity)},
+          {"value", number(c.value)},
+          {"limit", number(c.limit)},
+          {"limit_is", c.at_least ? "least" : "most"},
+          {"judged", c.judged()},
+          {"met", c.judged() ? Json(c.met()) : Json(nullptr)},
+          {"used_ratio", c.judged() ? number(c.used()) : Json(nullptr)},
+          {"decided_in", c.decided_in},
+          {"note", c.note}};
+}
+
+Json optical(const models::OpticalRow& row) {
+  const models::OpticalResult& r = row.result;
+  Json parts = Json::array();
+  for (const models::PartLoss& p : r.attribution.parts)
+    parts.push_back(
+        {{"part", p.name}, {"lost_alone_ratio", number(p.alone)}, {"won_if_mended_ratio", number(p.mended)}});
+  return {{"state", state(row.state)},
+          {"calm", row.calm},
+          {"pattern", row.calm ? "none" : models::spread_text(row.spread)},
+          {"intercept_ratio", number(r.intercept)},
+          {"intercept_sensor_at_drive_ratio", number(r.intercept_at_drive)},
+          {"intercept_row_mean_aim_ratio", number(r.intercept_row_mean)},
+          {"module_intercept_ratio", r.module_intercept},
+          {"module_twist_rad", r.module_twist},
+          {"sensor_reading_rad", number(r.sensor_reading)},
+          {"worst_twist_rad", number(r.worst_twist)},
+          {"slope_rms_rad", number(r.slope)},
+          {"slope_rms_before_fit_rad", number(r.slope_before)},
+          {"slope_rms_along_row_rad", number(r.slope_along)},
+          {"focal_change_m", number(r.focal_change)},
+          {"focal_shift_m", number(r.focal_shift)},
+          {"receiver_shift_m", number(r.receiver_shift)},
+          {"receiver_lateral_m", number(r.receiver_lateral)},
+          {"receiver_axial_m", number(r.receiver_axial)},
+          {"loss_ratio", number(r.attribution.loss)},
+          {"loss_parts", parts},
+          {"loss_interaction_ratio", number(r.attribution.interaction)}};
+}
+
+Json winds(const Assessment& a) {
+  Json list = Json::array();
+  for (const models::WindUse& use : a.winds) {
+    Json chain = Json::array();
+    for (const loads::ChainStep& s : use.at_axis.chain)
+      chain.push_back({{"what", s.what}, {"value", number(s.value)}, {"unit", s.unit}, {"how", s.how}});
+    list.push_back({{"kind", models::state_text(use.kind)},
+                    {"height_m", number(use.at_axis.height)},
+                    {"density_kg_m3", number(use.at_axis.density)},
+                    {"turbulence_ratio", number(use.at_axis.turbulence)},
+                    {"mean_speed_m_s", number(use.at_axis.mean_speed)},
+                    {"gust_speed_m_s", number(use.at_axis.gust_speed)},
+                    {"mean_pressure_Pa", number(use.at_axis.mean_pressure)},
+                    {"gust_pressure_Pa", number(use.at_axis.gust_pressure)},
+                    {"size_factor_ratio", number(use.size_factor)},
+                    {"chain", chain}});
+  }
+  return list;
+}
+
+Json strength(const Assessment& a) {
+  Json groups = Json::array();
+  for (const auto& [group, use] : a.strength.groups)
+    groups.push_back({{"group", group},
+                      {"part", use.part},
+                      {"stress_Pa", number(use.stress)},
+                      {"allowed_Pa", use.allowed > 0 ? Json(use.allowed) : Json(nullptr)},
+                      {"state", state(use.state)},
+                      {"pattern", models::spread_text(use.spread)}});
+  Json curve = Json::array();
+  for (const auto& [elevation, torque] : a.strength.moving_torque)
+    curve.push_back({{"elevation_rad", elevation}, {"moving_torque_N_m", torque}});
+  Json feet = Json::array();
+  const char* names[6] = {"Fx_N", "Fy_N", "Fz_N", "Mx_N_m", "My_N_m", "Mz_N_m"};
+  for (std::size_t i = 0; i < 6; ++i)
+    for (const models::FootReaction* foot : {&a.strength.greatest[i], &a.strength.least[i]})
+      feet.push_back({{"extreme_of", names[i]},
+                      {"pylon", foot->stand + 1},
+                      {"reaction_N_and_N_m", foot->value},
+                      {"state", state(foot->state)}});
+  return {{"rule", a.rule},
+          {"groups", groups},
+          {"moving_torque_N_m", number(std::abs(a.strength.moving.torque))},
+          {"holding_torque_N_m", number(std::abs(a.strength.holding.torque))},
+          {"moving_torque_by_elevation", curve},
+          {"foot_reactions", feet}};
+}
+
+Json cures(const Assessment& a) {
+  Json list = Json::array();
+  for (const models::Cure& c : a.cures) {
+    Json missed = Json::array();
+    for (const models::Criterion& m : c.still_missed) missed.push_back(m.key);
+    list.push_back({{"changes", c.changes},
+                    {"meets_all", c.meets_all},
+                    {"still_missed", missed},
+                    {"intercept_ratio", number(c.intercept)},
+                    {"moving_torque_N_m", number(c.moving_torque)},
+                    {"mass_kg", number(c.mass)},
+                    {"mass_change_kg", number(c.mass_change)}});
+  }
+  return list;
+}
+
+}  // namespace
+
+std::string trough_json(const Assessment& a, const std::string& hash) {
+  const char* verdicts[] = {"HOLDS", "DOES NOT HOLD", "HOLDS AS FAR AS JUDGED"};
+  const char* answers[] = {"yes", "no", "not judged"};
+  Json questions = Json::object();
+  const char* names[] = {"keeps_the_focus", "keeps_together", "turns_and_stays_put", "stands"};
+  for (std::size_t i = 0; i < 4; ++i) questions[names[i]] = answers[static_cast<int>(a.answers[i])];
+  Json criteria = Json::array(), optics = Json::array(), guesses = Json::array(), remarks = Json::array();
+  for (const auto& c : a.criteria) criteria.push_back(criterion(c));
+  for (const auto& row : a.optics) optics.push_back(optical(row));
+  for (const auto& g : a.deciding_guesses)
+    guesses.push_back({{"element", g.element},
+                       {"attribute", g.attribute},
+                       {"value_si", number(g.value)},
+                       {"turns_at_si", number(g.flips_at)},
+                       {"words", g.text}});
+  for (const auto& r : a.remarks) remarks.push_back(r.text);
+  const Json out = {{"schema", "focalframe-trough-1"},
+                    {"program_version", FOCALFRAME_VERSION},
+                    {"input_hash", hash},
+                    {"name", a.name},
+                    {"verdict", verdicts[static_cast<int>(a.verdict)]},
+                    {"limits_judged", a.limits_judged},
+                    {"limits_missed", a.limits_missed},
+                    {"questions", questions},
+                    {"criteria", criteria},
+                    {"not_judged", a.not_judged},
+                    {"guesses", a.guesses},
+                    {"deciding_guesses", guesses},
+                    {"row",
+                     {{"aperture_m", a.aperture},
+                      {"length_m", a.length},
+                      {"focal_length_m", a.focal_length},
+                      {"rim_angle_rad", a.rim_angle},
+                      {"axis_to_vertex_m", number(a.axis_to_vertex)},
+                      {"mirror_area_m2", a.mirror_area},
+                      {"mass_kg", a.mass},
+                      {"mass_per_area_kg_m2", a.mass_per_area},
+                      {"stand_mass_kg", a.stand_mass},
+                      {"centre_of_gravity_behind_axis_m", number(a.centre_below_axis)},
+                      {"weight_torque_N_m", number(a.weight_torque)},
+                      {"balancing_counterweight_kg", number(a.balancing_counterweight)},
+                      {"undeformed_intercept_ratio", number(a.undeformed)},
+                      {"beam_rms_rad", number(a.beam_rms)}}},
+                    {"wind",
+                     {{"table", a.table},
+                      {"title", a.table_title},
+                      {"confidence", a.table_confidence},
+                      {"source", a.table_source},
+                      {"zone", a.zone},
+                      {"states", winds(a)},
+                      {"row_moment_coefficient_ratio", number(a.row_moment_coefficient)},
+                      {"rated_moment_coefficient_ratio", number(a.rated_moment_coefficient)},
+                      {"wind_up_speed_m_s", number(a.divergence_speed)},
+                      {"wind_up_state", state(a.divergence_state)}}},
+                    {"optics", optics},
+                    {"strength", strength(a)},
+                    {"cures", cures(a)},
+                    {"proof",
+                     {{"wind_force_N", number(a.proof.wind_force)},
+                      {"q_area_coefficient_N", number(a.proof.q_area_c)},
+                      {"load_error_ratio", number(a.proof.load_error)},
+                      {"balance_ratio", number(a.proof.balance)},
+                      {"residual_ratio", number(a.proof.residual)},
+                      {"condition_estimate_ratio", number(a.proof.condition)},
+                      {"slope_change_halved_elements_ratio", number(a.proof.slope_change)},
+                      {"intercept_change_halved_elements_ratio", number(a.proof.intercept_change)},
+                      {"freedoms", a.freedoms}}},
+                    {"remarks", remarks},
+                    {"not_checked", a.not_checked},
+                    {"cautions", a.cautions}};
+  return out.dump(1) + "\n";
+}
+
+}  // namespace focalframe::cli

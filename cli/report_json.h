@@ -1,0 +1,14 @@
+#pragma once
+
+/// The assessment of a trough as JSON: schema "focalframe-trough-1", SI, units in the key names, everything
+/// that is printed. Keys are listed in DEVELOPERS.md.
+
+#include <string>
+
+#include "models/assessment.h"
+
+namespace focalframe::cli {
+
+std::string trough_json(const models::Assessment& assessment, const std::string& hash);
+
+}  // namespace focalframe::cli
