@@ -78,10 +78,8 @@ SecondOrder second_order(const Frame& frame, const LoadCase& load) {
   const SparseMatrix K = assemble_stiffness(frame, elements);
   const AssembledLoads loads = assemble_loads(frame, elements, {load});
   Response& r = result.response;
-  Eigen::MatrixXd first_order_part = r.end_force;  // forces whose geometric stiffness acts
   for (result.steps = 1; result.steps <= 50; ++result.steps) {
-    Response stress = r;
-    stress.end_force = first_order_part;
+    const Response stress = r;  // of the step before: its forces make the geometric stiffness
     const SparseMatrix total = K + assemble_geometric_stiffness(frame, load, stress);
     const SparseMatrix reduced = map.map.transpose() * total * map.map;
     const Factor factor(reduced, group);
@@ -102,10 +100,8 @@ SecondOrder second_order(const Frame& frame, const LoadCase& load) {
       nodes << r.displacement.row(frame.members[m].from).transpose(),
           r.displacement.row(frame.members[m].to).transpose();
       const Vec12 ends = elements[m].carry * nodes;
-      const Vec12 linear = elements[m].between * ends + loads.fixed_end_force.block<12, 1>(12 * row, 0);
-      first_order_part.row(row) = linear;
-      r.end_force.row(row) =
-          linear + inner_geometric_stiffness(frame, load, stress, member, elements[m]) * ends;
+      r.end_force.row(row) = elements[m].between * ends + loads.fixed_end_force.block<12, 1>(12 * row, 0) +
+                             inner_geometric_stiffness(frame, load, stress, member, elements[m]) * ends;
     }
     r.residual = right.norm() > 0 ? (right - reduced * x).norm() / right.norm() : 0;
     result.change = (r.displacement - before).norm() / std::max(r.displacement.norm(), 1e-300);

@@ -169,44 +169,41 @@ void add_moments(const Inside& in, double a, double b, Extremes& e) {
   }
 }
 
-/// Golden-section search for the greatest value between a and b.
-double peak_between(const std::function<double(double)>& f, double a, double b) {
-  const double golden = 0.6180339887498949;
-  double x1 = b - golden * (b - a), x2 = a + golden * (b - a), f1 = f(x1), f2 = f(x2);
-  for (int step = 0; step < 45; ++step) {
-    if (f1 > f2) {
-      b = x2, x2 = x1, f2 = f1;
-      x1 = b - golden * (b - a), f1 = f(x1);
-    } else {
-      a = x1, x1 = x2, f1 = f2;
-      x2 = a + golden * (b - a), f2 = f(x2);
-    }
+/// Root of f between a and b, where it changes sign.
+double root_between(const std::function<double(double)>& f, double a, double b) {
+  const bool rises = f(b) > 0;
+  for (int step = 0; step < 50; ++step) {
+    const double middle = (a + b) / 2;
+    ((f(middle) > 0) == rises ? b : a) = middle;
   }
   return (a + b) / 2;
 }
 
 void add_deflections(const Inside& in, double a, double b, Extremes& e) {
-  const int pieces = 8;
+  const int pieces = 12;  // the slope is a polynomial of degree four at most
+  const double L = in.element.span.length, hair = 1e-12;
   for (const int axis : {1, 2}) {
     Extreme& most = axis == 1 ? e.most_y : e.most_z;
     Extreme& least = axis == 1 ? e.least_y : e.least_z;
     const auto off_chord = [&](double xi) {
       return section_motion(in, xi)(axis) - (1 - xi) * in.ends(axis) - xi * in.ends(6 + axis);
     };
-    std::array<double, pieces + 1> value{};
-    for (int i = 0; i <= pieces; ++i) {
-      const double x = a + (b - a) * i / pieces;
-      value[static_cast<std::size_t>(i)] = off_chord(x);
-      take(most, least, x, value[static_cast<std::size_t>(i)]);
-    }
-    for (int i = 1; i < pieces; ++i) {
-      const auto k = static_cast<std::size_t>(i);
-      const double low = a + (b - a) * (i - 1) / pieces, high = a + (b - a) * (i + 1) / pieces;
-      const double rise = value[k] - value[k - 1], fall = value[k + 1] - value[k];
-      if (rise * fall > 0) continue;
-      const double sign = rise > 0 ? 1 : -1;
-      const double x = peak_between([&](double xi) { return sign * off_chord(xi); }, low, high);
-      take(most, least, x, off_chord(x));
+    const auto slope = [&](double xi) {
+      Vec6 motion = section_motion(in, xi);
+      turn_to_axis(in, xi, motion);
+      return (axis == 1 ? motion(rz) : -motion(ry)) - (in.ends(6 + axis) - in.ends(axis)) / L;
+    };
+    take(most, least, a, off_chord(a));
+    take(most, least, b, off_chord(b));
+    double before = a + hair, slope_before = slope(before);
+    for (int i = 1; i <= pieces; ++i) {
+      const double x = i == pieces ? b - hair : a + (b - a) * i / pieces, slope_here = slope(x);
+      if (slope_before * slope_here < 0) {
+        const double flat = root_between(slope, before, x);
+        take(most, least, flat, off_chord(flat));
+      }
+      before = x;
+      slope_before = slope_here;
     }
   }
 }
