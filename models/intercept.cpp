@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cassert>
 #include <cmath>
+#include <numbers>
 #include <stdexcept>
 
 #include "models/quadrature.h"
@@ -20,46 +21,74 @@ double half_width_seen(const Parabola& parabola, double y, double half_width, Li
   return half_width * std::max(0.0, std::cos(parabola.ray_angle(y)));
 }
 
-double caught(const BeamSpread& spread, double half_width, double distance, double miss) {
-  if (half_width <= 0) return 0;
-  return spread.cumulative((half_width - miss) / distance) -
-         spread.cumulative(-(half_width + miss) / distance);
+/// The share caught and its slope over the miss.
+struct Caught {
+  double value = 0, slope = 0;
+};
+
+Caught caught(const BeamSpread& spread, double half_width, double distance, double miss) {
+  const double right = (half_width - miss) / distance, left = (half_width + miss) / distance;
+  return {spread.cumulative(right) - spread.cumulative(-left),
+          (spread.density(left) - spread.density(right)) / distance};
 }
 
-double caught_slope(const BeamSpread& spread, double half_width, double distance, double miss) {
-  if (half_width <= 0) return 0;
-  return (spread.density((half_width + miss) / distance) - spread.density((half_width - miss) / distance)) /
-         distance;
-}
-
-/// One spread for all rows unless longitudinal errors make it depend on the ray angle.
+/// One spread for all rows unless longitudinal errors make it depend on the ray angle; then spreads at
+/// Chebyshev points of the variance, between which it is interpolated (it is a smooth function of the
+/// variance).
 class Spreads {
  public:
-  explicit Spreads(const BeamError& error)
-      : error_(error), varies_(error.longitudinal_slope_rms > 0 && error.incidence != 0), same_(make(0)) {}
+  Spreads(const BeamError& error, double rim_angle) : error_(error) {
+    const double least = variance(0), most = variance(rim_angle);
+    const int nodes = most > least ? 9 : 1;
+    for (int k = 0; k < nodes; ++k) {
+      const double t = nodes > 1 ? std::cos(std::numbers::pi * k / (nodes - 1)) : 0;
+      variances_.push_back((least + most) / 2 + t * (most - least) / 2);
+      spreads_.emplace_back(error.sun, 1 / std::cos(error.incidence), std::sqrt(variances_.back()));
+      reach_ = std::max(reach_, spreads_.back().reach());
+      detail_ = k == 0 ? spreads_.back().detail() : std::min(detail_, spreads_.back().detail());
+    }
+  }
 
-  bool varies() const { return varies_; }
-  BeamSpread at(double ray_angle) const { return varies_ ? make(ray_angle) : same_; }
+  double reach() const { return reach_; }
+  double detail() const { return detail_; }
+
+  Caught at(double ray_angle, double half_width, double distance, double miss) const {
+    if (half_width <= 0) return {};
+    Caught sum;
+    for (std::size_t k = 0; k < spreads_.size(); ++k) {
+      const double share = weight(k, variance(ray_angle));
+      if (share == 0) continue;
+      const Caught one = caught(spreads_[k], half_width, distance, miss);
+      sum.value += share * one.value;
+      sum.slope += share * one.slope;
+    }
+    return sum;
+  }
 
  private:
-  BeamSpread make(double ray_angle) const {
-    return {error_.sun, 1 / std::cos(error_.incidence), error_rms(error_, ray_angle)};
+  double variance(double ray_angle) const { return std::pow(error_rms(error_, ray_angle), 2); }
+  double weight(std::size_t k, double variance) const {
+    double product = 1;
+    for (std::size_t i = 0; i < variances_.size(); ++i)
+      if (i != k) product *= (variance - variances_[i]) / (variances_[k] - variances_[i]);
+    return product;
   }
+
   const BeamError& error_;
-  bool varies_;
-  BeamSpread same_;
+  std::vector<double> variances_;
+  std::vector<BeamSpread> spreads_;
+  double reach_ = 0, detail_ = 0;
 };
 
 double perfect(const Parabola& parabola, double half_width, const Spreads& spreads, LineReceiver kind) {
-  // A spread that varies costs a convolution per point, and is smooth enough for few.
-  const Quadrature rule = gauss_legendre(16, spreads.varies() ? 2 : 16, 0, parabola.width / 2);
-  const BeamSpread axial = spreads.at(0);
+  const Quadrature rule = gauss_legendre(16, 16, 0, parabola.width / 2);
   double sum = 0;
   for (std::size_t i = 0; i < rule.point.size(); ++i) {
     const double y = rule.point[i];
-    sum += rule.weight[i] * caught(spreads.varies() ? spreads.at(parabola.ray_angle(y)) : axial,
-                                   half_width_seen(parabola, y, half_width, kind),
-                                   parabola.local_focal_distance(y), 0);
+    sum += rule.weight[i] * spreads
+                                .at(parabola.ray_angle(y), half_width_seen(parabola, y, half_width, kind),
+                                    parabola.local_focal_distance(y), 0)
+                                .value;
   }
   return 2 * sum / parabola.width;
 }
@@ -90,45 +119,47 @@ TroughIntercept::TroughIntercept(const Parabola& parabola, double receiver_radiu
   if (!(parabola.width > 0 && parabola.focal_length > 0 && receiver_radius > 0))
     throw std::invalid_argument("aperture, focal length and receiver radius must be > 0");
   if (!(std::abs(error.incidence) < 1.57)) throw std::invalid_argument("incidence must be below 90 deg");
-  const Spreads spreads(error);
-  for (const double y : rows_y)
-    add_row(half_width_seen(parabola, y, receiver_radius, kind), parabola.local_focal_distance(y),
-            spreads.at(parabola.ray_angle(y)));
+  double rim_angle = parabola.rim_angle();
+  for (const double y : rows_y) rim_angle = std::max(rim_angle, std::abs(parabola.ray_angle(y)));
+  const Spreads spreads(error, rim_angle);
+  for (const double y : rows_y) {
+    const double phi = parabola.ray_angle(y), distance = parabola.local_focal_distance(y);
+    const double half_width = half_width_seen(parabola, y, receiver_radius, kind);
+    // Below `from` all light is caught, above `to` none; a point beam keeps a band of no practical width.
+    const double band = std::max(spreads.reach() * distance, 1e-12);
+    const double from = std::max(0.0, half_width - band), to = half_width + band;
+    const double wanted = spreads.detail() > 0 ? (to - from) / (fine_step * spreads.detail() * distance) : 1;
+    Row row;
+    row.knots = 2 + static_cast<std::size_t>(std::min(wanted, static_cast<double>(most_knots)));
+    const double step = (to - from) / static_cast<double>(row.knots - 1);
+    row.from = from;
+    row.per_step = 1 / step;
+    row.first = knots_.size();
+    for (std::size_t k = 0; k < row.knots; ++k) {
+      const Caught here = spreads.at(phi, half_width, distance, from + step * static_cast<double>(k));
+      knots_.push_back({here.value, step * here.slope});
+    }
+    knots_.back() = {0, 0};
+    rows_.push_back(row);
+  }
   undeformed_ = perfect(parabola, receiver_radius, spreads, kind);
 }
 
-void TroughIntercept::add_row(double half_width, double distance, const BeamSpread& spread) {
-  // Below `from` all light is caught, above `to` none; a point beam keeps a band of no practical width.
-  const double band = std::max(spread.reach() * distance, 1e-12);
-  const double from = std::max(0.0, half_width - band), to = half_width + band;
-  const double wanted = spread.detail() > 0 ? (to - from) / (fine_step * spread.detail() * distance) : 1;
-  Row row;
-  row.knots = 2 + static_cast<std::size_t>(std::min(wanted, static_cast<double>(most_knots)));
-  const double step = (to - from) / static_cast<double>(row.knots - 1);
-  row.from = from;
-  row.per_step = 1 / step;
-  row.first = knots_.size();
-  for (std::size_t k = 0; k < row.knots; ++k) {
-    const double miss = from + step * static_cast<double>(k);
-    knots_.push_back({caught(spread, half_width, distance, miss),
-                      step * caught_slope(spread, half_width, distance, miss)});
-  }
-  knots_.back() = {0, 0};
-  rows_.push_back(row);
-}
-
-double TroughIntercept::at(int row_index, double miss) const {
-  const Row& row = rows_[static_cast<std::size_t>(row_index)];
+double TroughIntercept::value(const Row& row, double miss) const {
   const double last = static_cast<double>(row.knots - 1);
-  // Written so that a NaN miss stays NaN and is not clamped into a plausible number.
-  const double t = std::clamp((std::abs(miss) - row.from) * row.per_step, 0.0, last);
-  if (!(t < last)) return std::isnan(t) ? t : 0;
-  const std::size_t i = std::min(static_cast<std::size_t>(t), row.knots - 2);
+  // std::max keeps its first argument when that is NaN: a NaN miss does not become a plausible number.
+  const double t = std::max((std::abs(miss) - row.from) * row.per_step, 0.0);
+  if (!(t < last)) return std::isnan(miss) ? miss : 0;
+  const auto i = static_cast<std::size_t>(t);
   const Knot *a = &knots_[row.first + i], *b = a + 1;
   const double s = t - static_cast<double>(i);
   const double rise = b->value - a->value;
   return a->value +
          s * (a->slope + s * (3 * rise - 2 * a->slope - b->slope + s * (a->slope + b->slope - 2 * rise)));
+}
+
+double TroughIntercept::at(int row, double miss) const {
+  return value(rows_[static_cast<std::size_t>(row)], miss);
 }
 
 double TroughIntercept::mean(std::span<const double> miss, std::span<const double> weight) const {
@@ -137,10 +168,11 @@ double TroughIntercept::mean(std::span<const double> miss, std::span<const doubl
   assert(weight.size() == miss.size() || weight.size() == count);
   const bool per_sample = weight.size() == miss.size();
   double sum = 0, total = 0;
-  for (std::size_t i = 0; i < miss.size(); i += count)
-    for (std::size_t j = 0; j < count; ++j) {
-      const double share = weight[per_sample ? i + j : j];
-      sum += share * at(static_cast<int>(j), miss[i + j]);
+  // Row by row, so that one row's table stays at hand for all its samples.
+  for (std::size_t j = 0; j < count; ++j)
+    for (std::size_t i = j; i < miss.size(); i += count) {
+      const double share = weight[per_sample ? i : j];
+      sum += share * value(rows_[j], miss[i]);
       total += share;
     }
   return sum / total;

@@ -83,7 +83,7 @@ class TroughIntercept {
   struct Knot {
     double value, slope;  ///< slope times the step
   };
-  void add_row(double half_width, double distance, const BeamSpread& spread);
+  double value(const Row& row, double miss) const;
 
   std::vector<Row> rows_;
   std::vector<Knot> knots_;

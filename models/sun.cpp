@@ -131,11 +131,13 @@ struct Ramps {
     s.push_back(angle);
     b.push_back(value);
   }
+  // Beyond 9 sigma the Gaussian has no say left and the bare ramp is exact.
   static double first(double x, double sigma) {
-    return sigma > 0 ? sigma * ramp(x / sigma) : std::max(x, 0.0);
+    return std::abs(x) < 9 * sigma ? sigma * ramp(x / sigma) : std::max(x, 0.0);
   }
   static double second(double x, double sigma) {
-    return sigma > 0 ? sigma * sigma * ramp_square(x / sigma) : x > 0 ? x * x / 2 : 0;
+    if (std::abs(x) < 9 * sigma) return sigma * sigma * ramp_square(x / sigma);
+    return x > 0 ? (x * x + sigma * sigma) / 2 : 0;
   }
 };
 

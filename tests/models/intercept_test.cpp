@@ -435,3 +435,23 @@ TEST_CASE("a trough without a size is refused") {
   CHECK_THROWS_AS(TroughIntercept({0, 1}, radius, gaussian(1 * mrad), {0.0}), std::invalid_argument);
   CHECK_THROWS_AS(TroughIntercept(wide, 0, gaussian(1 * mrad), {0.0}), std::invalid_argument);
 }
+
+TEST_CASE("a longitudinal slope error under a real sun blurs each row as its own spread does") {
+  // Second route: a trough whose transverse errors are what the longitudinal one adds at that row.
+  BeamError error = gaussian(4 * mrad);
+  error.sun = pillbox_sun();
+  error.incidence = 50 * deg;
+  error.longitudinal_slope_rms = 4 * mrad;
+  const std::vector<double> rows{0.0, 1.2, -2.0, 2.885};
+  const TroughIntercept varying(wide, radius, error, rows);
+  for (int row = 0; row < 4; ++row) {
+    BeamError same = error;
+    same.longitudinal_slope_rms = 0;
+    same.tracking_rms =
+        std::sqrt(std::pow(error_rms(error, wide.ray_angle(rows[static_cast<std::size_t>(row)])), 2) -
+                  std::pow(error_rms(same), 2));
+    const TroughIntercept own(wide, radius, same, rows);
+    for (const double miss : {0.0, 20 * mm, 45 * mm})
+      CHECK(varying.at(row, miss) == Approx(own.at(row, miss)).margin(2e-6));
+  }
+}
