@@ -57,7 +57,10 @@ int run_check(const DesignCommand& command) {
 int run_modes(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
-  return run_frame_modes(design, command);
+  if (design.kind == "frame") return run_frame_modes(design, command);
+  std::cerr << to_text(
+      {about_file(command.design, "Frequencies and buckling are computed for kind=\"frame\" only.")}, true);
+  return bad_input;
 }
 
 }  // namespace focalframe::cli

@@ -1,0 +1,22 @@
+#pragma once
+
+/// Design values back to the words of the file; used by the starter designs.
+
+#include <string>
+#include <vector>
+
+#include "models/schema.h"
+
+namespace focalframe::cli {
+
+/// The value as a user would write it, with its unit; empty when the field holds nothing.
+std::string field_text(const models::Field& field, const models::TroughDesign& design);
+
+/// ` name="value"` for those of `attributes` that are given, then basis; all given ones when empty.
+std::string attributes_text(const std::string& path, const models::TroughDesign& design,
+                            const std::vector<std::string>& attributes = {});
+
+/// The five signs XML needs escaped.
+std::string escaped(const std::string& text);
+
+}  // namespace focalframe::cli

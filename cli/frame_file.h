@@ -1,0 +1,25 @@
+#pragma once
+
+/// Reads the <frame> of a kind="frame" design into a frame and its load cases.
+
+#include <string>
+#include <vector>
+
+#include "cli/design_file.h"
+#include "fem/frame.h"
+#include "fem/load_case.h"
+
+namespace focalframe::cli {
+
+struct FrameFile {
+  fem::Frame frame;                  ///< names of nodes and members are their ids
+  std::vector<fem::LoadCase> cases;  ///< in the order in which the file names them first
+  std::vector<int> node_line, member_line;
+  bool has_mass = false;
+  std::vector<Message> messages;  ///< sorted by line
+};
+
+/// `design.kind` is "frame". The frame is complete only when there is no STOP.
+FrameFile read_frame(const DesignFile& design);
+
+}  // namespace focalframe::cli
