@@ -44,6 +44,30 @@ TEST_CASE("traced and integrated intercepts of a perfect dish agree within four 
   check_against(trace_rays(dish(0.10, 3 * mrad, 2.5 * mrad), rays), 0.938749);
 }
 
+TEST_CASE("tracking errors of a dish blur its beam as scatter of the same size does") {
+  TracedDish d = dish(0.10, 0);
+  d.error.tracking_rms = 7 * mrad;
+  check_against(trace_rays(d, rays), 0.857042);
+}
+
+TEST_CASE("traced and integrated intercepts of a sphere displaced along the axis agree") {
+  TracedDish d = dish(0.10, 15 * mrad);
+  d.kind = PointReceiver::sphere;
+  const DishIntercept intercept(d.parabola, d.receiver_radius, d.error, d.kind);
+  const Quadrature square = gauss_legendre(16, 0, 25);
+  for (const double rise : {400 * mm, -400 * mm}) {
+    d.receiver = {0, 0, rise};
+    DishMotion motion;
+    motion.receiver = d.receiver;
+    double expected = 0;
+    for (std::size_t i = 0; i < square.point.size(); ++i) {
+      const double rho = std::sqrt(square.point[i]);
+      expected += square.weight[i] / 25 * intercept.at(rho, dish_miss(d.parabola, rho, 0, motion));
+    }
+    check_against(trace_rays(d, rays), expected, 1e-3);
+  }
+}
+
 TEST_CASE("traced and integrated intercepts of mispointed dishes and displaced receivers agree") {
   TracedDish d = dish(0.125, 7 * mrad);
   d.aim = {6 * mrad, -8 * mrad, 0};

@@ -80,13 +80,16 @@ TEST_CASE("the aim may stray as far as one percent of the light allows") {
   CHECK(aim_tolerance(s.intercept, s.none, s.lever, s.rule.weight, whole + 0.001) == 0);
 }
 
-TEST_CASE("a misaim already there is taken from the tolerance") {
+TEST_CASE("a misaim already there is taken from the tolerance, whichever its sign") {
   const Sampled s(6 * mrad);
-  std::vector<double> miss;
-  for (const double lever : s.lever) miss.push_back(1 * mrad * lever);
   const double least = s.intercept.undeformed() - 0.03;
-  CHECK(aim_tolerance(s.intercept, miss, s.lever, s.rule.weight, least) ==
-        Approx(aim_tolerance(s.intercept, s.none, s.lever, s.rule.weight, least) - 1 * mrad).epsilon(1e-6));
+  const double free = aim_tolerance(s.intercept, s.none, s.lever, s.rule.weight, least);
+  for (const double there : {1 * mrad, -1 * mrad}) {
+    std::vector<double> miss;
+    for (const double lever : s.lever) miss.push_back(there * lever);
+    CHECK(aim_tolerance(s.intercept, miss, s.lever, s.rule.weight, least) ==
+          Approx(free - 1 * mrad).epsilon(1e-6));
+  }
 }
 
 TEST_CASE("misses and levers that do not fit each other are refused") {
