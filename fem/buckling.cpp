@@ -6,9 +6,8 @@
 #include "fem/eigen_pairs.h"
 #include "fem/geometric.h"
 #include "fem/geometric_parts.h"
-#include "fem/mechanism_search.h"
+#include "fem/member_loads.h"
 #include "fem/node_forces.h"
-#include "fem/text.h"
 
 namespace focalframe::fem {
 namespace {
@@ -77,6 +76,7 @@ SecondOrder second_order(const Frame& frame, const LoadCase& load) {
   const std::vector<int> group = nodes_of(map.kept);
   const SparseMatrix K = assemble_stiffness(frame, elements);
   const AssembledLoads loads = assemble_loads(frame, elements, {load});
+  const std::vector<LoadCase> own = loads_by_member(frame, load);
   Response& r = result.response;
   for (result.steps = 1; result.steps <= 50; ++result.steps) {
     const Response stress = r;  // of the step before: its forces make the geometric stiffness
@@ -101,7 +101,7 @@ SecondOrder second_order(const Frame& frame, const LoadCase& load) {
           r.displacement.row(frame.members[m].to).transpose();
       const Vec12 ends = elements[m].carry * nodes;
       r.end_force.row(row) = elements[m].between * ends + loads.fixed_end_force.block<12, 1>(12 * row, 0) +
-                             inner_geometric_stiffness(frame, load, stress, member, elements[m]) * ends;
+                             inner_geometric_stiffness(frame, own[m], stress, member, elements[m]) * ends;
     }
     r.residual = right.norm() > 0 ? (right - reduced * x).norm() / right.norm() : 0;
     result.change = (r.displacement - before).norm() / std::max(r.displacement.norm(), 1e-300);

@@ -3,6 +3,7 @@
 #include "fem/diagram.h"
 #include "fem/element.h"
 #include "fem/geometric_parts.h"
+#include "fem/member_loads.h"
 #include "fem/quadrature.h"
 
 namespace focalframe::fem {
@@ -70,8 +71,9 @@ SparseMatrix assemble_geometric_stiffness(const Frame& frame, const LoadCase& lo
     for (int i = 0; i < 3; ++i)
       for (int j = 0; j < 3; ++j) triplets.emplace_back(6 * node + 3 + i, 6 * node + 3 + j, block(i, j));
   };
+  const std::vector<LoadCase> own = loads_by_member(frame, load);
   for (int m = 0; m < static_cast<int>(frame.members.size()); ++m) {
-    const Mat12 K = geometric_stiffness(frame, load, response, m);
+    const Mat12 K = geometric_stiffness(frame, own[static_cast<std::size_t>(m)], response, m);
     const Member& member = frame.members[static_cast<std::size_t>(m)];
     const auto freedom = [&](int k) { return k < 6 ? 6 * member.from + k : 6 * member.to + k - 6; };
     for (int i = 0; i < 12; ++i)

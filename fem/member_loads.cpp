@@ -78,28 +78,42 @@ void add_gravity(const Part& part, const Vec3& gravity, EndForces&& held) {
 }  // namespace
 
 void require_sound_loads(const Frame& frame, const LoadCase& load) {
-  const std::string who = "load case '" + load.name + "': ";
+  // Words are put together only when something is wrong: cases are long.
+  const auto fail = [&](const std::string& what) {
+    require(false, "load case '" + load.name + "': " + what);
+  };
   const auto node = [&](int i) {
-    require(i >= 0 && i < static_cast<int>(frame.nodes.size()),
-            who + "node index " + std::to_string(i) + " does not exist");
+    if (i < 0 || i >= static_cast<int>(frame.nodes.size()))
+      fail("node index " + std::to_string(i) + " does not exist");
   };
   const auto member = [&](int i) {
-    require(i >= 0 && i < static_cast<int>(frame.members.size()),
-            who + "member index " + std::to_string(i) + " does not exist");
+    if (i < 0 || i >= static_cast<int>(frame.members.size()))
+      fail("member index " + std::to_string(i) + " does not exist");
   };
   for (const NodeLoad& l : load.nodes) node(l.node);
   for (const LineLoad& l : load.lines) {
     member(l.member);
-    require(l.from >= 0 && l.from < l.to && l.to <= 1, who + "line load on " + member_words(frame, l.member) +
-                                                           " from " + number(l.from) + " to " + number(l.to) +
-                                                           " must satisfy 0 <= from < to <= 1");
+    if (!(l.from >= 0 && l.from < l.to && l.to <= 1))
+      fail("line load on " + member_words(frame, l.member) + " from " + number(l.from) + " to " +
+           number(l.to) + " must satisfy 0 <= from < to <= 1");
   }
   for (const MemberPointLoad& l : load.points) {
     member(l.member);
-    require(l.at >= 0 && l.at <= 1, who + "point load on " + member_words(frame, l.member) + " at " +
-                                        number(l.at) + " must lie in 0..1");
+    if (!(l.at >= 0 && l.at <= 1))
+      fail("point load on " + member_words(frame, l.member) + " at " + number(l.at) + " must lie in 0..1");
   }
   for (const MemberTemperature& l : load.temperatures) member(l.member);
+}
+
+std::vector<LoadCase> loads_by_member(const Frame& frame, const LoadCase& load) {
+  require_sound_loads(frame, load);
+  std::vector<LoadCase> own(frame.members.size());
+  for (LoadCase& l : own) l.gravity = load.gravity;
+  for (const LineLoad& l : load.lines) own[static_cast<std::size_t>(l.member)].lines.push_back(l);
+  for (const MemberPointLoad& l : load.points) own[static_cast<std::size_t>(l.member)].points.push_back(l);
+  for (const MemberTemperature& l : load.temperatures)
+    own[static_cast<std::size_t>(l.member)].temperatures.push_back(l);
+  return own;
 }
 
 Eigen::MatrixXd held_end_forces(const Frame& frame, const std::vector<Element>& elements,
