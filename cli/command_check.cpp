@@ -16,6 +16,7 @@
 #include "models/assess.h"
 #include "models/cures.h"
 #include "models/guesses.h"
+#include "models/wind_rules.h"
 
 namespace focalframe::cli {
 namespace {
@@ -28,13 +29,11 @@ Message message_of(const models::Violation& v, const Lines& lines, const std::st
   m.file = file;
   for (const std::string& key : {v.element + "/" + v.attribute, v.element})
     if (const auto at = lines.find(key); m.line == 0 && at != lines.end()) m.line = at->second;
-  m.head = v.element + (v.attribute.empty() ? "" : " " + v.attribute);
+  m.head = !v.head.empty() ? v.head : v.element + (v.attribute.empty() ? "" : " " + v.attribute);
   m.rule = v.rule;
   m.text = v.text;
-  if (v.level == models::Violation::Level::stop)
-    m.advice = v.likely;
-  else
-    m.likely = v.likely;
+  m.likely = v.likely;
+  m.advice = v.advice;
   return m;
 }
 
@@ -69,7 +68,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
   place.head = "wind table=\"" + design.wind.table + "\"";
   const auto table = find_table(design.wind.table, options.design_path, place, messages);
   if (!table || has_stop(messages)) return print_problems(messages, options.verbose);
-  for (const models::Violation& v : models::table_gaps(design, table->table))
+  for (const models::Violation& v : models::wind_rules(design, table->table))
     messages.push_back(message_of(v, lines, options.design_path));
   if (has_stop(messages)) return print_problems(messages, options.verbose);
 

@@ -4,6 +4,7 @@
 
 #include "cli/command_check.h"
 #include "cli/command_frame.h"
+#include "cli/command_modes.h"
 #include "cli/design_file.h"
 #include "cli/exit_code.h"
 #include "cli/write_file.h"
@@ -58,9 +59,7 @@ int run_modes(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
   if (design.kind == "frame") return run_frame_modes(design, command);
-  std::cerr << to_text(
-      {about_file(command.design, "Frequencies and buckling are computed for kind=\"frame\" only.")}, true);
-  return bad_input;
+  return run_trough_modes(design, command);
 }
 
 }  // namespace focalframe::cli

@@ -1,5 +1,6 @@
 #include "cli/frame_results.h"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 #include <exception>

@@ -23,9 +23,9 @@ std::string geometry(const Assessment& a) {
       text_of("  mirror %.2f m2 (flat aperture between the end ribs: what coefficients are multiplied by)\n",
               a.mirror_area);
   out += text_of("  what turns %.0f kg, pylons and heads %.0f kg\n", a.mass, a.stand_mass);
-  out += text_of("  rotation axis %.0f mm behind the mirror vertex; centre of gravity %.0f mm %s the axis\n",
-                 a.axis_to_vertex / mm, std::abs(a.centre_below_axis) / mm,
-                 a.centre_below_axis >= 0 ? "behind" : "in front of");
+  out += text_of("  rotation axis %.0f mm %s the mirror vertex; centre of gravity %.0f mm %s the axis\n",
+                 std::abs(a.axis_to_vertex) / mm, a.axis_to_vertex >= 0 ? "behind" : "in front of",
+                 std::abs(a.centre_below_axis) / mm, a.centre_below_axis >= 0 ? "behind" : "in front of");
   out += text_of("  weight turns the row with %s when it faces the horizon\n",
                  shown(a.weight_torque, Quantity::torque).c_str());
   if (std::isfinite(a.balancing_counterweight))
@@ -44,12 +44,12 @@ std::string winds(const Assessment& a) {
   for (const models::WindUse& use : a.winds) {
     out += "  " + models::state_text(use.kind) + "\n";
     for (const loads::ChainStep& step : use.at_axis.chain)
-      out += text_of("    %-34.34s %10.4g %-6s %s\n", step.what.c_str(), step.value, step.unit.c_str(),
-                     step.how.c_str());
+      out += text_of("    %-34.34s %10.4g %s\n", step.what.c_str(), step.value, step.unit.c_str()) +
+             wrapped(step.how, 8);
     out += text_of("    %-34s %10.4g %-6s for drive torque and the drive pylon\n", "size factor cs",
                    use.size_factor, "-");
   }
-  out += "  coefficients: " + a.table + ", " + a.table_title + "\n";
+  out += wrapped("coefficients: " + a.table + ", " + a.table_title, 2);
   out += wrapped("confidence " + a.table_confidence + "; source: " + a.table_source, 4);
   out += text_of("  zone %s; greatest moment of the row about its axis %.3f q W2 L on the gust (cs in)\n",
                  a.zone.c_str(), a.row_moment_coefficient);
@@ -65,23 +65,23 @@ std::string winds(const Assessment& a) {
 std::string optics(const Assessment& a) {
   std::string out = section("Light, pose by pose (OPERATE, 10 min mean; twist against the sensor)");
   out +=
-      "  deg wind  pattern         light  row-mean   twist  slope  focus  recvr\n"
+      "  deg wind    pattern       light  row-mean   twist  slope  focus  recvr\n"
       "                                %     aim, %    mrad   mrad     mm     mm\n";
   for (const models::OpticalRow& row : a.optics) {
     const auto& r = row.result;
     const std::string place = models::place_text(row.state);
-    const std::string face = row.calm ? "calm" : place.substr(place.rfind(' ') + 1);
-    out += text_of("  %3.0f %-5s %-14s %6.2f    %6.2f  %6.2f %6.2f %6.2f %6.2f\n", row.state.elevation / deg,
+    const std::string face = row.calm ? "calm" : place.substr(place.find(", ") + 2);
+    out += text_of("  %3.0f %-7s %-12s %6.2f    %6.2f  %6.2f %6.2f %6.2f %6.2f\n", row.state.elevation / deg,
                    face.c_str(), row.calm ? "weight only" : models::spread_text(row.spread).c_str(),
                    100 * r.intercept, 100 * r.intercept_row_mean, r.worst_twist / mrad, r.slope / mrad,
                    r.focal_change / mm, r.receiver_shift / mm);
   }
   if (a.worst_light >= 0) {
     const auto& r = a.optics[static_cast<std::size_t>(a.worst_light)].result;
-    out += "  least light, module by module:";
+    std::string modules = "least light, module by module:";
     for (std::size_t i = 0; i < r.module_intercept.size(); ++i)
-      out += text_of(" %.1f%% (%+.1f mrad)", 100 * r.module_intercept[i], r.module_twist[i] / mrad);
-    out += "\n";
+      modules += text_of(" %.1f%% (%+.1f mrad)", 100 * r.module_intercept[i], r.module_twist[i] / mrad);
+    out += wrapped(modules, 2);
   }
   out +=
       "  slope: rms of the mirror normal across the trough, tilt and focus taken out, worst module;\n"
@@ -91,7 +91,7 @@ std::string optics(const Assessment& a) {
 
 std::string loads_text(const Assessment& a) {
   std::string out = section("Stress, worst of each group");
-  out += "  " + a.rule + "\n";
+  out += wrapped(a.rule, 2);
   for (const auto& [group, use] : a.strength.groups)
     out += text_of("  %-15s %6.0f of %4.0f MPa  %-20s %s\n", group.c_str(), use.stress / MPa,
                    use.allowed / MPa, models::place_text(use.state).c_str(), use.part.c_str());

@@ -43,7 +43,7 @@ std::string share(const Criterion& c) {
 
 std::string criterion_line(const Criterion& c) {
   const ShownPair pair = shown_pair(c);
-  return text_of("  %-19.19s %10s %8s   %-18s %s\n", c.name.c_str(), pair.value.c_str(), pair.limit.c_str(),
+  return text_of("  %-18.18s %10s %8s   %-19s %s\n", c.name.c_str(), pair.value.c_str(), pair.limit.c_str(),
                  share(c).c_str(), c.decided_in.c_str());
 }
 
@@ -71,7 +71,7 @@ std::string losses(const Assessment& a) {
   std::string out = text_of("  lost %.2f points: ", 100 * at.loss);
   std::vector<models::PartLoss> parts = at.parts;
   std::sort(parts.begin(), parts.end(), [](const auto& x, const auto& y) { return x.alone > y.alone; });
-  for (std::size_t i = 0; i < parts.size(); ++i)
+  for (std::size_t i = 0; i < std::min<std::size_t>(3, parts.size()); ++i)
     out += text_of("%s%s %.2f", i ? ", " : "", parts[i].name.c_str(), 100 * parts[i].alone);
   out += at.interaction <= 0 ? text_of(", less %.2f that cancel\n", -100 * at.interaction)
                              : text_of(", and %.2f together\n", 100 * at.interaction);
@@ -86,7 +86,7 @@ std::string cure_text(const models::Cure& cure) {
 
 std::string cure_lines(const Assessment& a, std::size_t most) {
   if (a.cures.empty()) return {};
-  std::string out = "\nWhat would help, each one re-run                      light    moving     mass\n";
+  std::string out = "What would help, each one re-run                      light    moving     mass\n";
   std::size_t shown_lines = 0;
   const bool any = std::any_of(a.cures.begin(), a.cures.end(), [](const auto& c) { return c.meets_all; });
   for (const models::Cure& cure : a.cures) {
@@ -170,8 +170,8 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
     out += question_lines(a, Question::ground, 2);
   }
   out += cure_lines(a, 2);
-  out += "\n" + wind_line(a);
-  out += text_of("Proof %s = q A C to %.0e, balance %.0e; half-size elements move the slope %.2g %%\n",
+  out += wind_line(a);
+  out += text_of("Proof %s = q A C to %.0e, balance %.0e; half-size elements: slope %.2g %%\n",
                  shown(a.proof.wind_force, models::Quantity::force).c_str(), a.proof.load_error,
                  a.proof.balance, std::abs(100 * a.proof.slope_change));
   out += text_of("CAUTION %s: %s confidence. A licensed engineer signs, not this tool.\n", a.table.c_str(),

@@ -52,7 +52,10 @@ std::string text_of(const char* format, ...) {
 std::string shown(double value, Quantity quantity, bool fine) {
   if (std::isnan(value)) return "-";
   const Scale s = scale_of(value, quantity);
-  return text_of("%.*f %s", s.digits + (fine ? 1 : 0), value / s.unit, s.name);
+  const int digits = s.digits + (fine ? 1 : 0);
+  const double step = std::pow(10.0, -digits);
+  const double rounded = std::round(value / s.unit / step) * step;
+  return text_of("%.*f %s", digits, rounded == 0 ? 0.0 : rounded, s.name);  // never "-0"
 }
 
 ShownPair shown_pair(const models::Criterion& c) {

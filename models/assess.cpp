@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <map>
 
 #include "fem/units.h"
 #include "loads/pose.h"
@@ -24,22 +25,20 @@ class Check {
         table_(table),
         row_(build_trough(design, refine), table.stations),
         optics_(row_, design),
-        strength_(row_, strength_rule(design.limits)),
+        strength_(row_, strength_rule(design.limits, design.site)),
         winds_(winds_at_axis(design)),
         zone_(loads::zone_factors(design.wind.zone).value_or(loads::ZoneFactors{})) {}
 
   Assessment run() {
     describe();
-    double pose_at = not_given;
-    PoseModel pose;
-    const std::vector<State> states = asked_states(d_);
-    for (const State& state : states) {
-      if (!(state.elevation == pose_at)) {
-        pose = row_.pose(state.elevation);
-        pose_at = state.elevation;
-      }
-      if (state.kind == StateKind::operate) look(pose, state);
-      load(pose, state);
+    std::map<double, std::vector<State>> poses;
+    for (const State& state : asked_states(d_)) poses[state.elevation].push_back(state);
+    for (const auto& [elevation, states] : poses) {
+      const PoseModel pose = row_.pose(elevation);
+      look(pose, states);
+      std::vector<StateLoads> loads_here;
+      for (const State& state : states) loads_here.push_back(load(pose, state));
+      strength_.add(pose, loads_here);
     }
     out_.strength = strength_.result();
     finish_optics();
@@ -50,11 +49,9 @@ class Check {
   /// Residual slope and intercept of one optical row again (for the discretisation check).
   OpticalResult again(const OpticalRow& row) {
     const PoseModel pose = row_.pose(row.state.elevation);
-    return optics_.look(
-        pose,
-        row.calm ? weight_amplitudes(row_, row.state.elevation)
-                 : weight_amplitudes(row_, row.state.elevation) + mean_wind(pose, row.state, row.spread),
-        true);
+    VectorXd amplitudes = weight_amplitudes(row_, row.state.elevation);
+    if (!row.calm) amplitudes += mean_wind(pose, row.state, row.spread);
+    return optics_.look(pose, amplitudes)[0];
   }
 
  private:
@@ -91,7 +88,7 @@ class Check {
     out_.table_confidence = table_.confidence;
     out_.table_source = table_.source;
     out_.zone = d_.wind.zone;
-    out_.rule = strength_rule(d_.limits).text;
+    out_.rule = strength_rule(d_.limits, d_.site).text;
     for (StateKind kind : {StateKind::operate, StateKind::turning, StateKind::stow, StateKind::stuck}) {
       const loads::WindAtHeight& wind = winds_.of(kind);
       if (!std::isnan(wind.height)) out_.winds.push_back({kind, wind, size_factor(wind)});
@@ -149,16 +146,33 @@ class Check {
     return wind_part(pose, wind_on_row(state, spread, 0, false, winds_.of(state.kind).mean_pressure));
   }
 
-  void look(const PoseModel& pose, const State& state) {
-    const VectorXd weight = weight_amplitudes(row_, state.elevation);
-    if (state.wind_from == 0)
-      out_.optics.push_back({state, true, Spread::linear, optics_.look(pose, weight, true)});
-    for (Spread spread : spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from)))
-      out_.optics.push_back(
-          {state, false, spread, optics_.look(pose, weight + mean_wind(pose, state, spread), true)});
+  // Weight alone, then both winds in both patterns.
+  void look(const PoseModel& pose, const std::vector<State>& states) {
+    const VectorXd weight = weight_amplitudes(row_, pose.elevation);
+    std::vector<OpticalRow> rows;
+    std::vector<VectorXd> columns;
+    for (const State& state : states) {
+      if (state.kind != StateKind::operate) continue;
+      if (rows.empty()) {
+        rows.push_back({state, true, Spread::linear, {}});
+        columns.push_back(weight);
+      }
+      for (Spread spread : spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from))) {
+        rows.push_back({state, false, spread, {}});
+        columns.push_back(weight + mean_wind(pose, state, spread));
+      }
+    }
+    if (rows.empty()) return;
+    MatrixXd amplitudes(weight.size(), static_cast<int>(columns.size()));
+    for (std::size_t i = 0; i < columns.size(); ++i) amplitudes.col(static_cast<int>(i)) = columns[i];
+    const std::vector<OpticalResult> results = optics_.look(pose, amplitudes);
+    for (std::size_t i = 0; i < rows.size(); ++i) {
+      rows[i].result = results[i];
+      out_.optics.push_back(rows[i]);
+    }
   }
 
-  void load(const PoseModel& pose, const State& state) {
+  StateLoads load(const PoseModel& pose, const State& state) {
     const loads::WindAtHeight& wind = winds_.of(state.kind);
     const bool peak = table_.kind == loads::CoefficientKind::peak;
     const double pressure = peak ? wind.mean_pressure : wind.gust_pressure;
@@ -181,8 +195,6 @@ class Check {
       }
     loads_here.wind.resize(row_.columns().all(), static_cast<int>(columns.size()));
     for (std::size_t i = 0; i < columns.size(); ++i) loads_here.wind.col(static_cast<int>(i)) = columns[i];
-    strength_.add(pose, loads_here);
-
     const double divergence = divergence_pressure(row_, pose, moment_slope(pitch));
     const double speed = std::sqrt(2 * divergence / wind.density);
     const double used = wind.mean_speed / speed;
@@ -192,6 +204,7 @@ class Check {
       out_.divergence_state = state;
     }
     note_moment(loads_here, pressure);
+    return loads_here;
   }
 
   // Effective moment coefficient about the rotation axis of the whole row, for the line beside the drive's

@@ -54,7 +54,7 @@ void bigger_profile(std::vector<Idea>& ideas, const std::string& part, const std
     }
   if (sizes.size() > 4) sizes.resize(4);
   for (const ProfileInput& next : sizes)
-    ideas.push_back({part, word + " " + profile_text(next), [=](TroughDesign& d) { at(d) = next; }});
+    ideas.push_back({part, word + " " + sizes_text(next), [=](TroughDesign& d) { at(d) = next; }});
 }
 
 bool missed(const Assessment& a, const std::string& start) {

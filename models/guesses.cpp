@@ -32,7 +32,10 @@ std::vector<Guess> guesses_in(const TroughDesign& design) {
           field.quantity == Quantity::time)
         continue;
       const double* number = number_at(field, copy);
-      if (number && std::isfinite(*number) && *number > 0) guesses.push_back({&element, &field, *number});
+      // An angle beyond a few milliradians is a pose somebody chose, not a guess.
+      const bool chosen = field.quantity == Quantity::angle && number && *number > 50e-3;
+      if (number && std::isfinite(*number) && *number > 0 && !chosen)
+        guesses.push_back({&element, &field, *number});
     }
   }
   return guesses;

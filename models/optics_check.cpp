@@ -8,6 +8,7 @@
 namespace focalframe::models {
 namespace {
 
+using Eigen::MatrixXd;
 using Eigen::VectorXd;
 
 std::span<const double> part(const VectorXd& all, int first, int count) {
@@ -46,12 +47,13 @@ OpticsCheck::OpticsCheck(const RowModel& row, const TroughDesign& design)
   const Skin& skin = row.collector().skin;
   for (double along : skin.station_weight)
     for (double across : skin.row_weight) weight_.push_back(along * across);
+  for (double y : row.collector().skin.row_y) terms_.push_back(miss_terms(parabola_, y));
   if (!std::isnan(design.optics.set_true)) {
     set_ = motion(row.pose(design.optics.set_true), weight_amplitudes(row, design.optics.set_true));
   }
 }
 
-OpticsCheck::Motion OpticsCheck::motion(const PoseModel& pose, const VectorXd& amplitudes) const {
+OpticsCheck::Motion OpticsCheck::motion(const PoseModel& pose, const MatrixXd& amplitudes) const {
   Motion m;
   m.v = row_.evaluate(row_.mirror_v, pose, amplitudes);
   m.w = row_.evaluate(row_.mirror_w, pose, amplitudes);
@@ -60,36 +62,42 @@ OpticsCheck::Motion OpticsCheck::motion(const PoseModel& pose, const VectorXd& a
   m.receiver = row_.evaluate(row_.receiver, pose, amplitudes);
   m.vertex = row_.evaluate(row_.vertex, pose, amplitudes);
   m.module_turn = row_.evaluate(row_.module_turn, pose, amplitudes);
-  m.sensor = row_.evaluate(row_.sensor_turn, pose, amplitudes)(0, 0);
+  m.sensor = row_.evaluate(row_.sensor_turn, pose, amplitudes);
   const int head = 6 * row_.collector().drive_bearing + fem::rx;
-  m.encoder = ((pose.bearing_motion.row(row_.drive_turn()) - pose.head_motion.row(head)) * amplitudes)(0, 0);
+  m.encoder = (pose.bearing_motion.row(row_.drive_turn()) - pose.head_motion.row(head)) * amplitudes;
   if (set_.v.size() > 0) {
-    m.v -= set_.v;
-    m.w -= set_.w;
-    m.turn -= set_.turn;
-    m.along -= set_.along;
-    m.receiver -= set_.receiver;
-    m.vertex -= set_.vertex;
-    m.module_turn -= set_.module_turn;
-    m.sensor -= set_.sensor;
-    m.encoder -= set_.encoder;
+    MatrixXd* const now[] = {&m.v,      &m.w,           &m.turn,   &m.along,  &m.receiver,
+                             &m.vertex, &m.module_turn, &m.sensor, &m.encoder};
+    const MatrixXd* const set[] = {&set_.v,           &set_.w,        &set_.turn,
+                                   &set_.along,       &set_.receiver, &set_.vertex,
+                                   &set_.module_turn, &set_.sensor,   &set_.encoder};
+    for (std::size_t i = 0; i < 9; ++i) now[i]->colwise() -= set[i]->col(0);
   }
   return m;
 }
 
-OpticalResult OpticsCheck::look(const PoseModel& pose, const VectorXd& amplitudes, bool full) const {
+std::vector<OpticalResult> OpticsCheck::look(const PoseModel& pose, const MatrixXd& amplitudes) const {
+  const Motion all = motion(pose, amplitudes);
+  std::vector<OpticalResult> results;
+  for (int c = 0; c < amplitudes.cols(); ++c) results.push_back(look_at(all, c));
+  return results;
+}
+
+OpticalResult OpticsCheck::look_at(const Motion& all, int column) const {
   const Skin& skin = row_.collector().skin;
   const int rows = skin.rows, stations = skin.modules * skin.stations, samples = skin.samples();
-  const Motion m = motion(pose, amplitudes);
-
-  std::vector<MissTerms> terms;
-  for (double y : skin.row_y) terms.push_back(miss_terms(parabola_, y));
+  struct {
+    VectorXd v, w, turn, along, receiver, vertex, module_turn;
+    double sensor, encoder;
+  } const m{all.v.col(column),           all.w.col(column),        all.turn.col(column),
+            all.along.col(column),       all.receiver.col(column), all.vertex.col(column),
+            all.module_turn.col(column), all.sensor(0, column),    all.encoder(0, column)};
   VectorXd raw(samples);
   double aim_top = 0, aim_bottom = 0;
   for (int st = 0; st < stations; ++st)
     for (int r = 0; r < rows; ++r) {
       const int s = st * rows + r;
-      const MissTerms& t = terms[static_cast<std::size_t>(r)];
+      const MissTerms& t = terms_[static_cast<std::size_t>(r)];
       raw[s] = t.mirror_v * m.v[s] + t.mirror_w * m.w[s] + t.rotation * m.turn[s] +
                t.receiver_v * m.receiver[2 * st] + t.receiver_w * m.receiver[2 * st + 1];
       const double a = weight_[static_cast<std::size_t>(s)];
@@ -106,7 +114,7 @@ OpticalResult OpticsCheck::look(const PoseModel& pose, const VectorXd& amplitude
   const auto aimed = [&](double back) {
     VectorXd miss = raw;
     for (int st = 0; st < stations; ++st)
-      for (int r = 0; r < rows; ++r) miss[st * rows + r] += terms[static_cast<std::size_t>(r)].aim * back;
+      for (int r = 0; r < rows; ++r) miss[st * rows + r] += terms_[static_cast<std::size_t>(r)].aim * back;
     return miss;
   };
   const auto caught = [&](const VectorXd& miss) { return intercept_.mean(part(miss, 0, samples), weight_); };
@@ -117,7 +125,6 @@ OpticalResult OpticsCheck::look(const PoseModel& pose, const VectorXd& amplitude
   for (int i = 0; i < skin.modules; ++i) out.module_twist.push_back(m.module_turn[i] - out.sensor_reading);
   for (double t : out.module_twist) out.worst_twist = keep_greater(out.worst_twist, t);
   out.worst_twist = std::abs(out.worst_twist);
-  if (!full) return out;
 
   const int per_module = skin.stations * rows;
   std::vector<double> y;

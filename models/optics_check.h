@@ -43,24 +43,25 @@ class OpticsCheck {
   double undeformed() const { return intercept_.undeformed(); }
   const BeamError& beam() const { return beam_; }
 
-  /// `amplitudes`: weight, wind and feedback of one state at `pose`. `full` false: intercepts, twist, sensor
-  /// only.
-  OpticalResult look(const PoseModel& pose, const Eigen::VectorXd& amplitudes, bool full) const;
+  /// One result per column of `amplitudes` (weight, wind and feedback of one state each), all at `pose`.
+  std::vector<OpticalResult> look(const PoseModel& pose, const Eigen::MatrixXd& amplitudes) const;
 
  private:
+  /// Columns = states.
   struct Motion {
-    Eigen::VectorXd v, w, turn, along, receiver, vertex, module_turn;
-    double sensor = 0, encoder = 0;
+    Eigen::MatrixXd v, w, turn, along, receiver, vertex, module_turn, sensor, encoder;
   };
-  Motion motion(const PoseModel& pose, const Eigen::VectorXd& amplitudes) const;
+  Motion motion(const PoseModel& pose, const Eigen::MatrixXd& amplitudes) const;
+  OpticalResult look_at(const Motion& all, int column) const;
 
   const RowModel& row_;
   Parabola parabola_;
   BeamError beam_;
   TroughIntercept intercept_;
   std::string sensor_kind_, correction_;
-  std::vector<double> weight_;  ///< per sample [m^2]
-  Motion set_;                  ///< weight at the set-true pose; zero when set unloaded
+  std::vector<MissTerms> terms_;  ///< per row
+  std::vector<double> weight_;    ///< per sample [m^2]
+  Motion set_;                    ///< weight at the set-true pose; zero when set unloaded
 };
 
 /// The beam's spread as the design states it.

@@ -26,19 +26,18 @@ double profile_depth(const ProfileInput& p) {
   return p.depth;
 }
 
-std::string profile_text(const ProfileInput& p) {
+std::string sizes_text(const ProfileInput& p) {
   char text[96];
   if (p.shape == "round-tube")
-    std::snprintf(text, sizeof text, "round tube %.1f x %.1f mm", p.outside_diameter / mm, p.wall / mm);
+    std::snprintf(text, sizeof text, "%.1f x %.1f mm", p.outside_diameter / mm, p.wall / mm);
   else if (p.shape == "square-tube")
-    std::snprintf(text, sizeof text, "square tube %.0f x %.1f mm", p.side / mm, p.wall / mm);
+    std::snprintf(text, sizeof text, "%.0f x %.1f mm", p.side / mm, p.wall / mm);
   else if (p.shape == "rectangular-tube")
-    std::snprintf(text, sizeof text, "rectangular tube %.0f x %.0f x %.1f mm", p.depth / mm, p.width / mm,
-                  p.wall / mm);
+    std::snprintf(text, sizeof text, "%.0f x %.0f x %.1f mm", p.depth / mm, p.width / mm, p.wall / mm);
   else if (p.shape == "round-bar")
-    std::snprintf(text, sizeof text, "round bar %.1f mm", p.outside_diameter / mm);
+    std::snprintf(text, sizeof text, "%.1f mm", p.outside_diameter / mm);
   else
-    std::snprintf(text, sizeof text, "flat %.0f x %.1f mm", p.depth / mm, p.thickness / mm);
+    std::snprintf(text, sizeof text, "%.0f x %.1f mm", p.depth / mm, p.thickness / mm);
   return text;
 }
 

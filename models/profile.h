@@ -14,7 +14,7 @@ fem::Section section_of(const ProfileInput& profile);
 /// Overall size of the profile along its depth direction [m].
 double profile_depth(const ProfileInput& profile);
 
-/// "round tube 139.7 x 4.0 mm"
-std::string profile_text(const ProfileInput& profile);
+/// Sizes only: "139.7 x 4.0 mm"
+std::string sizes_text(const ProfileInput& profile);
 
 }  // namespace focalframe::models

@@ -109,6 +109,7 @@ RowModel::RowModel(Collector collector, std::vector<double> stations)
   MatrixXd fixed = MatrixXd::Zero(12 * static_cast<int>(collector_.body.members.size()), loads.cols());
   fixed.leftCols(4) = fem::assemble_fixed_end_forces(collector_.body, members);
   make_outputs(fixed);
+  loads_ = std::move(loads);
 }
 
 // Columns of the pressure patterns through the transposed skin operator; the first four columns are left

@@ -91,6 +91,11 @@ class RowModel {
   Eigen::MatrixXd evaluate(const LinearOutput& output, const PoseModel& pose,
                            const Eigen::MatrixXd& amplitudes) const;
 
+  /// Nodal loads on the body for given amplitudes, (6 #nodes), collector axes [N, N m].
+  Eigen::VectorXd nodal_loads(const Eigen::VectorXd& amplitudes) const {
+    return loads_ * amplitudes.head(columns_.body());
+  }
+
   /// Sum of the nodal loads of body columns: force y, z and moment about the rotation axis, 3 x #body
   /// columns.
   const Eigen::MatrixXd& load_totals() const { return load_totals_; }
@@ -114,7 +119,7 @@ class RowModel {
   std::vector<fem::Condensed> stands_;
   std::vector<LinearOutput> stand_posts_;  ///< 12 end forces of the post; held: weight, wind; joint: its head
   std::vector<Integral> integrals_;        ///< (#body columns) x #modules
-  Eigen::MatrixXd load_totals_;
+  Eigen::MatrixXd loads_, load_totals_;
 };
 
 }  // namespace focalframe::models

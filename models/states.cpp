@@ -13,11 +13,13 @@ namespace {
 
 constexpr double pi = std::numbers::pi;
 
-// Both ends and even steps of at most 15 deg between them.
-std::vector<double> sweep(double from, double to) {
-  const int steps = std::max(1, static_cast<int>(std::ceil(std::abs(to - from) / (15 * deg) - 1e-9)));
-  std::vector<double> poses;
-  for (int i = 0; i <= steps; ++i) poses.push_back(from + (to - from) * i / steps);
+// Both ends and every multiple of 15 deg between them, so that all states share their poses.
+std::vector<double> sweep(double one, double other) {
+  const double from = std::min(one, other), to = std::max(one, other);
+  std::vector<double> poses = {from};
+  for (int k = static_cast<int>(std::floor(from / (15 * deg))); k * 15 * deg < to; ++k)
+    if (k * 15 * deg > from + 1e-9 && k * 15 * deg < to - 1e-9) poses.push_back(k * 15 * deg);
+  if (to > from) poses.push_back(to);
   return poses;
 }
 
@@ -53,10 +55,15 @@ std::string state_text(StateKind kind) {
 }
 
 std::string place_text(const State& state) {
-  const bool concave = std::abs(loads::pitch_seen_by_wind(state.elevation, state.wind_from)) < pi / 2;
+  // Edge-on the wind strikes neither face: say which side it comes from.
+  const double pitch = std::abs(loads::pitch_seen_by_wind(state.elevation, state.wind_from));
+  const char* face = std::abs(pitch - pi / 2) < 1e-6
+                         ? (loads::upwind_side(state.wind_from) > 0 ? "from +Y" : "from -Y")
+                     : pitch < pi / 2 ? "face"
+                                      : "back";
   char text[48];
   std::snprintf(text, sizeof text, "%s %.0f deg, %s", state_text(state.kind).c_str(),
-                std::round(state.elevation / deg) + 0.0, concave ? "face" : "back");
+                std::round(state.elevation / deg) + 0.0, face);
   return text;
 }
 
@@ -159,7 +166,7 @@ std::vector<Violation> table_gaps(const TroughDesign& design, const loads::Coeff
     v.element = state.kind == StateKind::stuck ? "drive" : "operation";
     v.attribute = attribute[kind];
     v.text = text;
-    v.likely = "add rows to the table, choose another pose, or name a table that covers it";
+    v.advice = "Add rows to the table, choose another pose, or name a table that covers it.";
     v.rule = "table-range";
     gaps.push_back(v);
     return gaps;  // one is enough: the mend is the same for all

@@ -22,12 +22,13 @@ struct State {
   double wind_from = 0;  ///< [rad]: 0 from +Y, pi from -Y
 };
 
-/// "OPERATE 45 deg, back": the face the wind strikes is the concave one ("face") or the convex one ("back").
+/// "OPERATE 45 deg, back": the face the wind strikes is the concave one ("face") or the convex one
+/// ("back"); edge-on "from +Y" or "from -Y".
 std::string place_text(const State& state);
 
-/// Every asked state in both winds. Operate: the tracking range in steps of at most 15 deg. Turning: from the
-/// stow pose to the farther end of the tracking range, likewise. Stow: the pose and both ends of its
-/// tolerance. Stuck: the drive's whole range (or what the states above span).
+/// Every asked state in both winds. Operate: the ends of the tracking range and every multiple of 15 deg
+/// between. Turning: from the stow pose to the farther end of the tracking range, likewise. Stow: the pose
+/// and both ends of its tolerance. Stuck: the drive's whole range (or what the states above span).
 std::vector<State> asked_states(const TroughDesign& design);
 
 /// The wind of each kind of state at the rotation axis; chain empty when the design states none.

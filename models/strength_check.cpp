@@ -1,9 +1,11 @@
 #include "models/strength_check.h"
 
+#include <algorithm>
 #include <cmath>
 #include <cstdio>
 
 #include "fem/section.h"
+#include "loads/combination.h"
 
 namespace focalframe::models {
 namespace {
@@ -19,25 +21,54 @@ fem::Resultants at_end(const Eigen::Ref<const VectorXd>& f, bool far_end) {
   return {s * f[o], s * f[o + 1], s * f[o + 2], s * f[o + 3], s * f[o + 4], s * f[o + 5]};
 }
 
+// Factor pairs of the combinations in which wind leads, each once; a set that names none for STUCK takes it
+// as accidental with factors of 1.
+std::vector<ActionFactors> pairs(const loads::CombinationSet& set, bool stuck) {
+  double leading = 0;
+  std::vector<ActionFactors> out;
+  for (const loads::Combination& c : set.combinations) {
+    const bool fits = stuck ? c.states == loads::StateGroup::stuck
+                            : c.purpose == loads::Purpose::strength && c.states != loads::StateGroup::stuck;
+    if (!fits || c.wind <= 0) continue;
+    out.push_back({c.permanent, c.wind});
+    leading = std::max(leading, c.wind);
+  }
+  std::erase_if(out, [&](const ActionFactors& f) { return f.wind < leading; });
+  std::sort(out.begin(), out.end(), [](const auto& x, const auto& y) { return x.permanent > y.permanent; });
+  out.erase(std::unique(out.begin(), out.end(),
+                        [](const auto& x, const auto& y) { return x.permanent == y.permanent; }),
+            out.end());
+  if (out.empty()) out.push_back({1, 1});
+  return out;
+}
+
+std::string pairs_text(const loads::CombinationSet& set, bool stuck) {
+  std::string text;
+  for (const ActionFactors& f : pairs(set, stuck)) {
+    char one[40];
+    std::snprintf(one, sizeof one, "%s%.2f G + %.2f W", text.empty() ? "" : ", ", f.permanent, f.wind);
+    text += one;
+  }
+  return text;
+}
+
 }  // namespace
 
-StrengthRule strength_rule(const LimitsInput& limits) {
-  if (limits.strength == "EN 1990")
-    return {limits.strength,
-            {{1.35, 1.5}, {1.0, 1.5}},
-            {{1.0, 1.0}},
-            1.0,
-            "EN 1990 eq. 6.10: 1.35 G + 1.5 W and 1.0 G + 1.5 W, STUCK as accidental 1.0 G + 1.0 W; yield "
-            "over 1.0 "
-            "(factors from memory; check your national annex)"};
-  if (limits.strength == "ASCE 7")
-    return {limits.strength,
-            {{1.2, 1.0}, {0.9, 1.0}},
-            {{1.0, 1.0}},
-            0.9,
-            "ASCE 7 strength design: 1.2 D + 1.0 W and 0.9 D + 1.0 W for ultimate wind speeds (7-10 and "
-            "later), STUCK "
-            "1.0 D + 1.0 W; 0.9 times yield (from memory; check your edition)"};
+StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site) {
+  if (limits.strength == "EN 1990") {
+    const loads::CombinationSet set = loads::en_1990(std::isnan(site.altitude) ? 0 : site.altitude);
+    return {set.name, pairs(set, false), pairs(set, true), 1.0,
+            "EN 1990 " + set.edition + ": " + pairs_text(set, false) + "; STUCK as accidental " +
+                pairs_text(set, true) + "; yield over 1.0 (factors from memory; check your national annex)"};
+  }
+  if (limits.strength == "ASCE 7") {
+    const loads::CombinationSet set = loads::asce_7_strength(site.asce_edition);
+    return {set.name, pairs(set, false), pairs(set, true), 0.9,
+            "ASCE " + set.edition + " strength: " + pairs_text(set, false) + "; STUCK " +
+                pairs_text(set, true) + "; wind from " +
+                (set.ultimate_wind_map ? "an ultimate-level map" : "a service-level map") +
+                "; 0.9 times yield (from memory; check your edition)"};
+  }
   if (!std::isnan(limits.strength_factor)) {
     char text[96];
     std::snprintf(text, sizeof text, "unfactored actions, yield over %.2f", limits.strength_factor);
@@ -50,11 +81,17 @@ StrengthRule strength_rule(const LimitsInput& limits) {
           "no strength rule asked for: unfactored actions against yield, not judged"};
 }
 
-void StrengthCheck::add(const PoseModel& pose, const StateLoads& loads) {
-  const auto& factors = loads.state.kind == StateKind::stuck ? rule_.accidental : rule_.usual;
-  add_members(pose, loads, factors);
-  add_drive(pose, loads);
-  add_stands(pose, loads, factors);
+const std::vector<ActionFactors>& StrengthCheck::factors(StateKind kind) const {
+  return kind == StateKind::stuck ? rule_.accidental : rule_.usual;
+}
+
+void StrengthCheck::add(const PoseModel& pose, const std::vector<StateLoads>& states) {
+  if (states.empty()) return;
+  add_members(pose, states);
+  for (const StateLoads& loads : states) {
+    add_drive(pose, loads);
+    add_stands(pose, loads);
+  }
 }
 
 void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
@@ -70,19 +107,29 @@ void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
   worst = {stress, allowed, used, member.name, loads.state, loads.spread[static_cast<std::size_t>(variant)]};
 }
 
-void StrengthCheck::add_members(const PoseModel& pose, const StateLoads& loads,
-                                const std::vector<ActionFactors>& factors) {
-  const MatrixXd weight = row_.evaluate(row_.end_force, pose, loads.weight);
-  const MatrixXd wind = row_.evaluate(row_.end_force, pose, loads.wind);
+void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLoads>& states) {
+  // One product for everything this pose is asked: weight, then every wind of every state.
+  int columns = 1;
+  for (const StateLoads& loads : states) columns += static_cast<int>(loads.wind.cols());
+  MatrixXd amplitudes(states[0].weight.size(), columns);
+  amplitudes.col(0) = states[0].weight;
+  int at = 1;
+  for (const StateLoads& loads : states) {
+    amplitudes.middleCols(at, loads.wind.cols()) = loads.wind;
+    at += static_cast<int>(loads.wind.cols());
+  }
+  const MatrixXd forces = row_.evaluate(row_.end_force, pose, amplitudes);
   const fem::Frame& frame = row_.collector().body;
   VectorXd ends(12);
-  for (int v = 0; v < wind.cols(); ++v)
-    for (std::size_t m = 0; m < frame.members.size(); ++m)
-      for (const ActionFactors& f : factors) {
-        const int at = 12 * static_cast<int>(m);
-        ends = f.permanent * weight.block<12, 1>(at, 0) + f.wind * wind.block<12, 1>(at, v);
-        judge(frame.members[m], frame, ends, loads, v);
-      }
+  at = 1;
+  for (const StateLoads& loads : states)
+    for (int v = 0; v < loads.wind.cols(); ++v, ++at)
+      for (std::size_t m = 0; m < frame.members.size(); ++m)
+        for (const ActionFactors& f : factors(loads.state.kind)) {
+          const int first = 12 * static_cast<int>(m);
+          ends = f.permanent * forces.block<12, 1>(first, 0) + f.wind * forces.block<12, 1>(first, at);
+          judge(frame.members[m], frame, ends, loads, v);
+        }
 }
 
 void StrengthCheck::add_drive(const PoseModel& pose, const StateLoads& loads) {
@@ -101,19 +148,20 @@ void StrengthCheck::add_drive(const PoseModel& pose, const StateLoads& loads) {
   }
 }
 
-void StrengthCheck::add_stands(const PoseModel& pose, const StateLoads& loads,
-                               const std::vector<ActionFactors>& factors) {
+void StrengthCheck::add_stands(const PoseModel& pose, const StateLoads& loads) {
   for (std::size_t k = 0; k < row_.collector().stands.size(); ++k) {
     const Stand& stand = row_.collector().stands[k];
     const int number = static_cast<int>(k);
     const VectorXd weight = row_.evaluate_stand(number, pose, loads.weight);
     const MatrixXd wind = row_.evaluate_stand(number, pose, loads.wind);
     for (int v = 0; v < wind.cols(); ++v) {
-      for (const ActionFactors& f : factors) {
-        const VectorXd ends = f.permanent * weight + f.wind * wind.col(v);
+      // The drive pylon gathers the whole row's torque; the others stand alone in a gust.
+      const double gathered = stand.driven ? loads.gathered : 1;
+      for (const ActionFactors& f : factors(loads.state.kind)) {
+        const VectorXd ends = f.permanent * weight + f.wind * gathered * wind.col(v);
         judge(stand.frame.members[0], stand.frame, ends, loads, v);
       }
-      const VectorXd plain = weight + loads.gathered * wind.col(v);
+      const VectorXd plain = weight + gathered * wind.col(v);
       // Post axes x, y, z are world Z, X, Y.
       FootReaction foot{{plain[1], plain[2], plain[0], plain[4], plain[5], plain[3]}, number, loads.state};
       for (std::size_t i = 0; i < 6; ++i) {

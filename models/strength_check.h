@@ -28,7 +28,8 @@ struct StrengthRule {
 };
 /// "EN 1990", "ASCE 7", or the plain factor of the design; with neither given, unfactored against yield (not
 /// judged).
-StrengthRule strength_rule(const LimitsInput& limits);
+/// `altitude` [m] and `asce_edition` choose between variants of a code's set.
+StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site);
 
 struct StressUse {
   double stress = 0;   ///< von Mises bound under factored actions [Pa]
@@ -76,13 +77,15 @@ struct StateLoads {
 class StrengthCheck {
  public:
   StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {}
-  void add(const PoseModel& pose, const StateLoads& loads);
+  /// All states of one pose at once.
+  void add(const PoseModel& pose, const std::vector<StateLoads>& states);
   const StrengthResult& result() const { return result_; }
 
  private:
-  void add_members(const PoseModel& pose, const StateLoads& loads, const std::vector<ActionFactors>& factors);
+  void add_members(const PoseModel& pose, const std::vector<StateLoads>& states);
+  const std::vector<ActionFactors>& factors(StateKind kind) const;
   void add_drive(const PoseModel& pose, const StateLoads& loads);
-  void add_stands(const PoseModel& pose, const StateLoads& loads, const std::vector<ActionFactors>& factors);
+  void add_stands(const PoseModel& pose, const StateLoads& loads);
   void judge(const fem::Member& member, const fem::Frame& frame,
              const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant);
 

@@ -419,10 +419,14 @@ class TroughBuilder {
 Collector build_trough(const TroughDesign& design, int refine) {
   TroughLayout layout = lay_out(design, refine);
   if (design.row.axis_word == "balanced") {
-    // The tube's end nodes move with the axis but the masses do not: one pass finds the centre of gravity.
+    // End plates reach from the tube to the axis, so their share of the centre of gravity moves with it.
     layout.axis_to_vertex = layout.tube_to_vertex;
-    const Collector trial = TroughBuilder(design, layout).build();
-    layout.axis_to_vertex = -fem::total_mass(trial.body).centre.z();
+    for (int pass = 0; pass < 20; ++pass) {
+      const double centre = fem::total_mass(TroughBuilder(design, layout).build().body).centre.z();
+      const double change = std::abs(-centre - layout.axis_to_vertex);
+      layout.axis_to_vertex = -centre;
+      if (change < 1e-5) break;
+    }
   }
   return TroughBuilder(design, layout).build();
 }

@@ -50,7 +50,7 @@ std::string spread_text(Spread spread) {
     case Spread::edge:
       return "edge peak";
     case Spread::profile:
-      return "table's profile";
+      return "own profile";
   }
   return {};
 }

@@ -1,0 +1,84 @@
+#include "cli/command_modes.h"
+
+#include <cmath>
+#include <cstdio>
+#include <nlohmann/json.hpp>
+
+#include "cli/exit_code.h"
+#include "cli/report_units.h"
+#include "cli/shipped_tables.h"
+#include "cli/write_file.h"
+#include "fem/units.h"
+#include "models/row_modes.h"
+
+namespace focalframe::cli {
+namespace {
+
+using Json = nlohmann::ordered_json;
+
+std::string in_words(const models::RowStability& s) {
+  std::string out = text_of("\nLooking at %.0f deg (%d freedoms, what turns and what stands together)\n",
+                            s.elevation / deg, s.freedoms);
+  out += "  frequency    what moves most\n";
+  for (const models::RowMode& m : s.modes)
+    out += text_of("  %8.3f Hz  %.60s\n", m.frequency, m.moves.c_str());
+  if (s.load.empty()) return out + "  buckling: no STOW wind is stated\n";
+  if (s.buckling.empty())
+    return out + "  buckling: no factor below 1000 under weight and the STOW gust, either wind\n";
+  out += "  buckling factor on " + s.load + "\n";
+  for (const models::RowBuckling& b : s.buckling)
+    out += text_of("  %8.2f     %.60s\n", b.factor, b.moves.c_str());
+  if (s.buckling[0].factor < 10)
+    out += text_of("  below 10: second-order effects enlarge deflections by about %.0f %%\n",
+                   100 / (s.buckling[0].factor - 1));
+  return out;
+}
+
+Json as_json(const models::RowStability& s) {
+  Json modes = Json::array(), buckling = Json::array();
+  for (const auto& m : s.modes)
+    modes.push_back({{"frequency_hz", m.frequency}, {"residual_ratio", m.residual}, {"moves", m.moves}});
+  for (const auto& b : s.buckling)
+    buckling.push_back({{"factor_ratio", b.factor}, {"residual_ratio", b.residual}, {"moves", b.moves}});
+  return {{"elevation_rad", s.elevation},
+          {"freedoms", s.freedoms},
+          {"modes", modes},
+          {"buckling_load", s.load},
+          {"buckling", buckling}};
+}
+
+}  // namespace
+
+int run_trough_modes(const DesignFile& design, const DesignCommand& command) {
+  std::vector<Message> messages;
+  Message place;
+  place.file = command.design;
+  place.head = "wind table=\"" + design.trough.wind.table + "\"";
+  if (const auto at = design.lines.find("wind/table"); at != design.lines.end()) place.line = at->second;
+  const auto table = find_table(design.trough.wind.table, command.design, place, messages);
+  if (!table || has_stop(messages)) {
+    std::fputs(to_text(messages, command.verbose).c_str(), stderr);
+    return exit_code(messages);
+  }
+  std::vector<double> poses = {90 * deg};
+  if (std::isfinite(design.trough.operation.stow_at) &&
+      std::abs(design.trough.operation.stow_at - poses[0]) > 1e-9)
+    poses.push_back(design.trough.operation.stow_at);
+  std::string text = design.trough.name + ": how it swings and where it would buckle\n";
+  Json all = {{"schema", "focalframe-modes-1"}, {"name", design.trough.name}, {"poses", Json::array()}};
+  for (double pose : poses) {
+    const models::RowStability s = models::row_stability(design.trough, table->table, pose, command.count);
+    text += in_words(s);
+    all["poses"].push_back(as_json(s));
+  }
+  text += "\nA count of negative pivots has proved that no lower frequency or factor was missed.\n";
+  if (!command.json_path.empty())
+    if (const std::string problem = write_file(command.json_path, all.dump(1) + "\n"); !problem.empty()) {
+      std::fprintf(stderr, "%s\n", problem.c_str());
+      return bad_input;
+    }
+  if (!command.quiet) std::fputs(text.c_str(), stdout);
+  return all_met;
+}
+
+}  // namespace focalframe::cli
