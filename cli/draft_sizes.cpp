@@ -39,7 +39,9 @@ void choose_row(TroughDesign& d, const DraftSizes& sizes) {
   if (std::isnan(sizes.length) && sizes.modules > 0 && !both) row.module_length = usual;
   row.drive_after_module = row.modules / 2;
   row.row_azimuth = std::numbers::pi;
-  row.axis_height = std::isnan(sizes.axis_height) ? to_step(0.5 * width + 0.5, 0.1) : sizes.axis_height;
+  row.axis_height = std::isnan(sizes.axis_height)
+                        ? std::max(to_step(0.6 * width, 0.05), to_step(0.5 * width + 0.1, 0.05))
+                        : sizes.axis_height;
 }
 
 // Twist under the mean operate wind of 10 m/s (about 28 Pa at the axis, moment coefficient 0.15) at most
@@ -146,11 +148,12 @@ void choose_ground(TroughDesign& d) {
   d.pylons.footing.sideways = d.pylons.footing.along_row = rounded(2e6 * std::max(0.25, scale));
   d.pylons.footing.upright = rounded(20e6 * std::max(0.25, scale));
   d.pylons.footing.rocking = rounded(3e6 * std::max(0.25, scale));
-  // Gust of 85 Pa, moment coefficient 0.25, the whole row; four times that to hold in a storm.
-  const double torque = 85 * 0.25 * width * width * d.row.module_length * d.row.modules;
+  // Gust of 85 Pa, moment coefficient 0.45 (upper bound about the axis), the whole row; two and a half times
+  // that to hold in a storm.
+  const double torque = 85 * 0.45 * width * width * d.row.module_length * d.row.modules;
   d.drive.moving_torque = rounded(torque);
-  d.drive.holding_torque = rounded(4 * torque);
-  d.drive.stiffness = rounded(600 * torque);
+  d.drive.holding_torque = rounded(2.5 * torque);
+  d.drive.stiffness = rounded(400 * torque);
   d.drive.play = 0.5 * mrad;
   d.drive.turns_from = -95 * deg;
   d.drive.turns_to = 170 * deg;

@@ -92,7 +92,7 @@ std::string every_field_text(const TroughDesign& design, const std::string& name
         shown += " " + f.name + "=\"" + escaped(field_text(f, design)) + "\"";
     }
     t += indent + "-->\n";
-    if (!models::is_given(element, design)) continue;
+    if (element.repeats || !models::is_given(element, design)) continue;
     if (const auto basis = design.basis.find(element.path); basis != design.basis.end())
       shown += " basis=\"" + basis->second + "\"";
     const bool holds = i + 1 < table.size() && table[i + 1].path.starts_with(element.path + "/");

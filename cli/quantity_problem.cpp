@@ -207,7 +207,11 @@ std::vector<std::string> repaired(const std::string& unit, Quantity quantity) {
     const auto parsed = parse_unit(text);
     return parsed && parsed->dimension == wanted;
   };
-  if (const std::string near = nearest_unit(unit, wanted); !near.empty()) return {near};
+  // A unit that exists was typed on purpose; only its letter case may be a slip (kn, kN).
+  const bool known = parse_unit(unit).has_value();
+  if (const std::string near = nearest_unit(unit, wanted);
+      !near.empty() && (!known || lower(near) == lower(unit)))
+    return {near};
   for (const std::string& common : common_units(quantity))
     if (common.starts_with(unit + "/") || common.starts_with(unit + " ")) return {common};
   if (fits(unit + "/rad")) return {unit + "/rad"};

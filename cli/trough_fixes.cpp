@@ -22,6 +22,22 @@ std::set<Place> broken_places(const models::TroughDesign& design, Violation::Lev
   return places;
 }
 
+bool customary(const std::string& unit) {
+  for (const char* part : {"in", "ft", "lbf", "lbm", "psi", "ksi", "degF"})
+    if (unit.starts_with(part)) return true;
+  return false;
+}
+
+// Whether one unit is written where the other is meant: people slip by thousands within their own units, and
+// with speeds and heights also between them.
+bool plausible(const Field& field, const std::string& unit, const std::string& other) {
+  if (field.quantity == Quantity::speed) return true;
+  if (field.quantity == Quantity::angle)
+    return field.most <= 0.3 || other == "deg";  // elevations are in degrees
+  if (field.quantity == Quantity::length && field.most >= 200) return other == "m" || other == "ft";
+  return other != "cm" && customary(unit) == customary(other);
+}
+
 // The same number with other units, and without its sign.
 std::vector<std::string> other_readings(const Field& field, const std::string& raw) {
   std::vector<std::string> values;
@@ -30,10 +46,8 @@ std::vector<std::string> other_readings(const Field& field, const std::string& r
     if (field.quantity == Quantity::count && number.starts_with('-')) values.push_back(number.substr(1));
     return values;
   }
-  // An elevation is never a few milliradians; a slope or a play may be.
-  const bool elevation = field.quantity == Quantity::angle && field.most > 0.3;
   for (const std::string& other : common_units(field.quantity))
-    if (other != unit && !(elevation && other != "deg")) values.push_back(number + " " + other);
+    if (other != unit && plausible(field, unit, other)) values.push_back(number + " " + other);
   if (number.starts_with('-') && field.least >= 0)
     values.push_back(number.substr(1) + (unit.empty() ? "" : " " + unit));
   return values;

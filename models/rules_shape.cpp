@@ -192,6 +192,10 @@ void check_receiver(RuleBook& book) {
               "The sleeve's inside of " + length(s.outside_diameter - 2 * s.wall) +
                   " does not clear the receiver of " + length(outside) + ".")
         .involves = {"receiver/outside-diameter", "receiver/sleeve/wall"};
+  if (s.outside_diameter > 6 * outside)
+    book.stop("receiver/sleeve", "outside-diameter",
+              "The sleeve would be more than six times as wide as the receiver of " + length(outside) + ".")
+        .involves = {"receiver/outside-diameter"};
   if (largest_size(r.posts.profile) > 0.2 * width)
     book.stop("receiver/posts", "shape",
               "The posts would be " + length(largest_size(r.posts.profile)) +

@@ -51,13 +51,13 @@ void add_shape(Table& table) {
       "modules on one drive and where the axes lie");
   row.add("modules", Q::count, &RowInput::modules, "modules in the row, each between two pylons")
       .required()
-      .between(1, 60);
+      .between(1, 200);
   row.add("module-length", Q::length, &RowInput::module_length, "pylon to pylon").required().between(0.3, 60);
   row.text("coupling", &RowInput::coupling, "torque-only: bending is free between modules")
       .words({"torque-only", "continuous"})
       .preset("torque-only");
   row.add("drive-after-module", Q::count, &RowInput::drive_after_module, "0 = at the row's first end")
-      .between(-1, 60)
+      .between(-1, 200)
       .preset("half the modules");
   row.add("row-azimuth", Q::angle, &RowInput::row_azimuth,
           "bearing of the row's direction, from north, for wind records")
@@ -447,10 +447,13 @@ void add_limits(Table& table) {
            "instead: plain factor on yield, loads unfactored")
       .between(1, 5);
 
-  // Repeated: each one read is a new entry at the end of the list.
+  // Repeated: the reader adds an entry for each one and then fills the last. Without any there is only a
+  // scratch entry, so that looking never changes a design.
   const auto last = [](TroughDesign& d) -> AcceptInput& {
-    if (d.accepted.empty()) d.accepted.emplace_back();
-    return d.accepted.back();
+    thread_local AcceptInput none;
+    if (!d.accepted.empty()) return d.accepted.back();
+    none = {};
+    return none;
   };
   ElementMaker<AcceptInput> accept(table, "accept", false, last, "a rule that is broken on purpose");
   accept.element().repeats = true;
@@ -465,7 +468,8 @@ bool differs(const Slot& a, const Slot& b) {
         using Pointer = decltype(x);
         const auto* y = std::get<Pointer>(b);
         if constexpr (std::is_same_v<Pointer, double*>)
-          return !(*x == *y || (std::isnan(*x) && std::isnan(*y)));
+          return !(std::abs(*x - *y) <= 1e-12 * std::abs(*y) || *x == *y ||
+                   (std::isnan(*x) && std::isnan(*y)));
         else
           return *x != *y;
       },
