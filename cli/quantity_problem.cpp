@@ -218,7 +218,8 @@ std::vector<std::string> repaired(const std::string& unit, Quantity quantity) {
   for (const std::string& word : words_in(unit))
     for (const char* part :
          {"kN", "MN", "N", "m", "mm", "rad", "deg", "lbf", "in", "ft", "kg", "s", "h", "km"})
-      if (word != part && edit_distance(word, part) <= 1 && fits(with_word(unit, word, part)))
+      if (word != part && edit_distance(word, part) <= (parse_unit(word) ? 0.5 : 1.0) &&
+          fits(with_word(unit, word, part)))
         return {with_word(unit, word, part)};
   for (std::size_t cut = unit.find_last_of(' '); cut != std::string::npos && cut > 0;
        cut = unit.find_last_of(' ', cut - 1))
