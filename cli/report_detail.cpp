@@ -65,16 +65,17 @@ std::string winds(const Assessment& a) {
 std::string optics(const Assessment& a) {
   std::string out = section("Light, pose by pose (OPERATE, 10 min mean; twist against the sensor)");
   out +=
-      "  deg wind    pattern       light  row-mean   twist  slope  focus  recvr\n"
-      "                                %     aim, %    mrad   mrad     mm     mm\n";
+      "  deg wind    pattern       light  row-mean   twist  slope  focus  recvr    rim\n"
+      "                                %     aim, %    mrad   mrad     mm     mm     mm\n";
   for (const models::OpticalRow& row : a.optics) {
     const auto& r = row.result;
     const std::string place = models::place_text(row.state);
     const std::string face = row.calm ? "calm" : place.substr(place.find(", ") + 2);
-    out += text_of("  %3.0f %-7s %-12s %6.2f    %6.2f  %6.2f %6.2f %6.2f %6.2f\n", row.state.elevation / deg,
-                   face.c_str(), row.calm ? "weight only" : models::spread_text(row.spread).c_str(),
-                   100 * r.intercept, 100 * r.intercept_row_mean, r.worst_twist / mrad, r.slope / mrad,
-                   r.focal_change / mm, r.receiver_shift / mm);
+    out += text_of("  %3.0f %-7s %-12s %6.2f    %6.2f  %6.2f %6.2f %6.2f %6.2f %6.2f\n",
+                   row.state.elevation / deg, face.c_str(),
+                   row.calm ? "weight only" : models::spread_text(row.spread).c_str(), 100 * r.intercept,
+                   100 * r.intercept_row_mean, r.worst_twist / mrad, r.slope / mrad, r.focal_change / mm,
+                   r.receiver_shift / mm, r.rim_deflection / mm);
   }
   if (a.worst_light >= 0) {
     const auto& r = a.optics[static_cast<std::size_t>(a.worst_light)].result;
@@ -84,8 +85,9 @@ std::string optics(const Assessment& a) {
     out += wrapped(modules, 2);
   }
   out +=
-      "  slope: rms of the mirror normal across the trough, tilt and focus taken out, worst module;\n"
-      "  focus: change of the best-fit focal length; recvr: receiver from the moved focus.\n";
+      "  slope: rms of the mirror normal across the trough, every section's tilt, focus out; worst module;\n"
+      "  focus: change of the best-fit focal length; recvr: receiver from the moved focus;\n"
+      "  rim: mirror at the rib tips along its normal, against the tube.\n";
   return out;
 }
 

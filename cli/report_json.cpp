@@ -80,6 +80,7 @@ Json optical(const models::OpticalRow& row) {
           {"receiver_shift_m", number(r.receiver_shift)},
           {"receiver_lateral_m", number(r.receiver_lateral)},
           {"receiver_axial_m", number(r.receiver_axial)},
+          {"rim_deflection_m", number(r.rim_deflection)},
           {"loss_ratio", number(r.attribution.loss)},
           {"loss_parts", parts},
           {"loss_interaction_ratio", number(r.attribution.interaction)}};

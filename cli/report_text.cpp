@@ -32,8 +32,8 @@ std::string share(const Criterion& c) {
   if (c.quantity == models::Quantity::ratio) {
     const double points = std::abs(c.value - c.limit) * 100;
     const int digits = points < 0.1 ? 2 : 1;
-    if (c.at_least) return text_of(c.met() ? "%.*f points to spare" : "%.*f points short", digits, points);
-    return text_of(c.met() ? "%.*f points to spare" : "%.*f points over", digits, points);
+    if (c.at_least) return text_of(c.met() ? "%.*f points spare" : "%.*f points short", digits, points);
+    return text_of(c.met() ? "%.*f points spare" : "%.*f points over", digits, points);
   }
   const double used = 100 * c.used();
   if (c.met()) return text_of("%.0f %% used", std::min(used, 100.0));
@@ -43,7 +43,7 @@ std::string share(const Criterion& c) {
 
 std::string criterion_line(const Criterion& c) {
   const ShownPair pair = shown_pair(c);
-  return text_of("  %-18.18s %10s %8s   %-19s %s\n", c.name.c_str(), pair.value.c_str(), pair.limit.c_str(),
+  return text_of("  %-16.16s%11s %7s  %-16s %s\n", c.name.c_str(), pair.value.c_str(), pair.limit.c_str(),
                  share(c).c_str(), c.decided_in.c_str());
 }
 
@@ -110,7 +110,7 @@ std::string cure_lines(const Assessment& a, std::size_t most) {
       if (!cure.meets_all && cure.changes.size() == 1 && !cure.still_missed.empty()) {
         const Criterion& c = cure.still_missed.front();
         const ShownPair pair = shown_pair(c);
-        out += text_of("  not enough alone: %.34s (%.18s %s of %s)\n", cure.changes[0].c_str(),
+        out += text_of("  not enough alone: %.30s (%.14s %s of %s)\n", cure.changes[0].c_str(),
                        c.name.c_str(), pair.value.c_str(), pair.limit.c_str());
         break;
       }
@@ -152,10 +152,12 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
                                    a.aperture, a.length, a.mass, a.mass_per_area);
   std::string out = text_of("%-65s input %.8s\n", head.c_str(), hash.c_str()) + verdict_line(a);
   const auto ask = [&](const char* question, int i, const char* columns) {
-    out += text_of("%-22s %-10s %s\n", question, answer_text(a.answers[static_cast<std::size_t>(i)]).c_str(),
-                   columns);
+    std::string line = text_of("%-22s %-9s %s", question,
+                               answer_text(a.answers[static_cast<std::size_t>(i)]).c_str(), columns);
+    line.erase(line.find_last_not_of(' ') + 1);
+    out += line + "\n";
   };
-  ask("Keeps the focus?", 0, "  limit                      decided in");
+  ask("Keeps the focus?", 0, "limit                   decided in");
   out += question_lines(a, Question::focus, 4) + losses(a);
   for (std::size_t i = 0; i < std::min<std::size_t>(1, a.deciding_guesses.size()); ++i)
     out += "  decided by a guess: " + a.deciding_guesses[i].text + "\n";
@@ -174,7 +176,7 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
   out += text_of("Proof %s = q A C to %.0e, balance %.0e; half-size elements: slope %.2g %%\n",
                  shown(a.proof.wind_force, models::Quantity::force).c_str(), a.proof.load_error,
                  a.proof.balance, std::abs(100 * a.proof.slope_change));
-  out += text_of("CAUTION %s: %s confidence. A licensed engineer signs, not this tool.\n", a.table.c_str(),
+  out += text_of("CAUTION %s: %s confidence. A licensed engineer signs, not the tool.\n", a.table.c_str(),
                  a.table_confidence.c_str());
   return out;
 }

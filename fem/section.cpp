@@ -181,13 +181,13 @@ double peak_area(double peak, double shear_area, double area) {
 }  // namespace
 
 double von_mises_bound(const Section& section, const Resultants& r) {
-  const double bending = section.round ? share(std::hypot(r.My, r.Mz), section.Wy)
+  const double bending = section.round ? share(std::sqrt(r.My * r.My + r.Mz * r.Mz), section.Wy)
                                        : share(r.My, section.Wy) + share(r.Mz, section.Wz);
   const double normal = share(r.N, section.A) + bending;
   const double ty = share(r.Vy, peak_area(section.peak_shear_y, section.shear_area_y, section.A));
   const double tz = share(r.Vz, peak_area(section.peak_shear_z, section.shear_area_z, section.A));
   // In solids and closed tubes the two act at right angles or in different walls; in an open wall they add.
-  const double transverse = section.closed ? std::hypot(ty, tz) : ty + tz;
+  const double transverse = section.closed ? std::sqrt(ty * ty + tz * tz) : ty + tz;
   const double shear = share(r.T, section.Wt) + transverse;
   return std::sqrt(normal * normal + 3 * shear * shear);
 }

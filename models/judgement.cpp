@@ -40,7 +40,7 @@ void judge_focus(const TroughDesign& d, Assessment& a) {
   const OpticalRow& light = a.optics[static_cast<std::size_t>(a.worst_light)];
   add("intercept", "light caught", Quantity::ratio, light.result.intercept, limits.intercept, true, light);
   if (!std::isnan(limits.lost_to_frame))
-    add("lost-to-frame", "lost to the frame", Quantity::ratio, a.undeformed - light.result.intercept,
+    add("lost-to-frame", "lost to frame", Quantity::ratio, a.undeformed - light.result.intercept,
         limits.lost_to_frame, false, light);
   const OpticalRow* slope = worst_by(a.optics, &OpticalResult::slope);
   add("slope", "residual slope", Quantity::angle, slope->result.slope, limits.slope, false, *slope);
@@ -84,7 +84,7 @@ void judge_drive(const TroughDesign& d, Assessment& a) {
     if (use.kind != a.divergence_state.kind || !std::isfinite(a.divergence_speed)) continue;
     Criterion c{Question::drive,
                 "wind-up",
-                "wind-up, mean wind",
+                "wind-up wind",
                 Quantity::speed,
                 use.at_axis.mean_speed,
                 a.divergence_speed / 2,
@@ -106,11 +106,11 @@ void judge_ground(const TroughDesign& d, Assessment& a) {
   const double overturn = std::max(s.greatest[3].value[3], -s.least[3].value[3]);
   const State& state =
       s.greatest[3].value[3] >= -s.least[3].value[3] ? s.greatest[3].state : s.least[3].state;
-  a.criteria.push_back({Question::ground, "overturning", "pylon foot moment", Quantity::torque, overturn,
+  a.criteria.push_back({Question::ground, "overturning", "foot moment", Quantity::torque, overturn,
                         footing.overturning_capacity, false, place_text(state),
                         "unfactored, 3 s gust with size factor"});
   const double uplift = std::max(0.0, -s.least[2].value[2]);
-  a.criteria.push_back({Question::ground, "uplift", "pylon foot uplift", Quantity::force, uplift,
+  a.criteria.push_back({Question::ground, "uplift", "foot uplift", Quantity::force, uplift,
                         footing.uplift_capacity, false, place_text(s.least[2].state),
                         "unfactored, 3 s gust with size factor"});
 }

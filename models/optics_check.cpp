@@ -83,6 +83,19 @@ std::vector<OpticalResult> OpticsCheck::look(const PoseModel& pose, const Matrix
   return results;
 }
 
+// The receiver against the focus carried along by the tube: the vertex line's motion and the rotation about
+// it.
+void OpticsCheck::look_at_receiver(const Eigen::Vector2d& receiver, const Eigen::Vector2d& vertex,
+                                   double twist, OpticalResult& out) const {
+  const double lateral = receiver[0] - vertex[0] + parabola_.focal_length * twist;
+  const double axial = receiver[1] - vertex[1];
+  const double shift = std::hypot(lateral, axial);
+  if (shift <= out.receiver_shift) return;
+  out.receiver_shift = shift;
+  out.receiver_lateral = lateral;
+  out.receiver_axial = axial;
+}
+
 OpticalResult OpticsCheck::look_at(const Motion& all, int column) const {
   const Skin& skin = row_.collector().skin;
   const int rows = skin.rows, stations = skin.modules * skin.stations, samples = skin.samples();
@@ -126,63 +139,62 @@ OpticalResult OpticsCheck::look_at(const Motion& all, int column) const {
   for (double t : out.module_twist) out.worst_twist = keep_greater(out.worst_twist, t);
   out.worst_twist = std::abs(out.worst_twist);
 
-  const int per_module = skin.stations * rows;
-  std::vector<double> y;
-  for (int s = 0; s < per_module; ++s) y.push_back(skin.row_y[static_cast<std::size_t>(s % rows)]);
+  // Every cross-section on its own: the tube twists inside a module too, and that is twist, not shape.
   std::vector<MissPart> parts = {{"twist", {}}, {"receiver", {}}, {"focus", {}}, {"ribs", {}}};
+  const auto append = [](std::vector<double>& to, const std::vector<double>& more) {
+    to.insert(to.end(), more.begin(), more.end());
+  };
   double along = 0, area = 0;
   for (int i = 0; i < skin.modules; ++i) {
-    const int first = i * per_module;
-    std::vector<double> receiver_v, receiver_w;
+    double length = 0, before = 0, after = 0;
     for (int st = i * skin.stations; st < (i + 1) * skin.stations; ++st) {
-      receiver_v.push_back(m.receiver[2 * st]);
-      receiver_w.push_back(m.receiver[2 * st + 1]);
-      // Against the focus carried along by the tube: the vertex line's motion and the module's rotation about
-      // it.
-      const double lateral =
-          m.receiver[2 * st] - m.vertex[2 * st] + parabola_.focal_length * m.module_turn[i];
-      const double axial = m.receiver[2 * st + 1] - m.vertex[2 * st + 1];
-      const double shift = std::hypot(lateral, axial);
-      if (std::isnan(out.receiver_shift) || shift > out.receiver_shift) {
-        out.receiver_shift = shift;
-        out.receiver_lateral = lateral;
-        out.receiver_axial = axial;
+      const int first = st * rows;
+      const double twist = m.turn[first + rows / 2];  // this row rides on the tube itself
+      TroughSamples section;
+      section.y = skin.row_y;
+      section.weight = skin.row_weight;
+      section.v = part(m.v, first, rows);
+      section.w = part(m.w, first, rows);
+      section.rotation = part(m.turn, first, rows);
+      section.receiver_v = part(m.receiver, 2 * st, 1);
+      section.receiver_w = part(m.receiver, 2 * st + 1, 1);
+      const TroughShape shape = fit_shape(parabola_, section);
+      const TroughMissParts split =
+          split_miss(parabola_, section, shape, std::span<const double>(&twist, 1), out.sensor_reading);
+      append(parts[0].miss, split.twist);
+      append(parts[1].miss, split.receiver);
+      append(parts[2].miss, split.focus);
+      std::vector<double> ribs = split.residual;
+      for (std::size_t s = 0; s < ribs.size(); ++s) ribs[s] += split.tilt[s];
+      append(parts[3].miss, ribs);
+
+      const double weight = skin.station_weight[static_cast<std::size_t>(st)];
+      length += weight;
+      before += weight * shape.slope_rms * shape.slope_rms;
+      after += weight * shape.slope_rms_after * shape.slope_rms_after;
+      out.focal_change = keep_greater(out.focal_change, shape.focal_change);
+      out.focal_shift = keep_greater(out.focal_shift, shape.focal_line_w);
+      look_at_receiver(m.receiver.segment<2>(2 * st), m.vertex.segment<2>(2 * st), twist, out);
+      for (int r : {0, rows - 1}) {
+        const double rim = skin.row_y[static_cast<std::size_t>(r)];
+        const double v = m.v[first + r] - m.vertex[2 * st] + twist * parabola_.height(rim);
+        const double w = m.w[first + r] - m.vertex[2 * st + 1] - twist * rim;
+        const fem::Vec3 normal = area_normal(rim, parabola_.focal_length).normalized();
+        out.rim_deflection = keep_greater(out.rim_deflection, v * normal.y() + w * normal.z());
+      }
+      for (int s = first; s < first + rows; ++s) {
+        along += weight_[static_cast<std::size_t>(s)] * m.along[s] * m.along[s];
+        area += weight_[static_cast<std::size_t>(s)];
       }
     }
-    TroughSamples samples_of;
-    samples_of.y = y;
-    samples_of.weight = std::span<const double>(weight_).subspan(static_cast<std::size_t>(first),
-                                                                 static_cast<std::size_t>(per_module));
-    samples_of.v = part(m.v, first, per_module);
-    samples_of.w = part(m.w, first, per_module);
-    samples_of.rotation = part(m.turn, first, per_module);
-    samples_of.longitudinal = part(m.along, first, per_module);
-    samples_of.receiver_v = receiver_v;
-    samples_of.receiver_w = receiver_w;
-    const TroughShape shape = fit_shape(parabola_, samples_of);
-    if (std::isnan(out.slope) || shape.slope_rms_after > out.slope) out.slope = shape.slope_rms_after;
-    if (std::isnan(out.slope_before) || shape.slope_rms > out.slope_before)
-      out.slope_before = shape.slope_rms;
-    out.focal_change = keep_greater(out.focal_change, shape.focal_change);
-    out.focal_shift = keep_greater(out.focal_shift, shape.focal_line_w);
-    const double twist[] = {m.module_turn[i]};
-    const TroughMissParts split = split_miss(parabola_, samples_of, shape, twist, out.sensor_reading);
-    const auto append = [](std::vector<double>& to, const std::vector<double>& more) {
-      to.insert(to.end(), more.begin(), more.end());
-    };
-    append(parts[0].miss, split.twist);
-    append(parts[1].miss, split.receiver);
-    append(parts[2].miss, split.focus);
-    std::vector<double> ribs = split.residual;
-    for (std::size_t s = 0; s < ribs.size(); ++s) ribs[s] += split.tilt[s];
-    append(parts[3].miss, ribs);
-    out.module_intercept.push_back(intercept_.mean(part(miss, first, per_module), samples_of.weight));
+    out.slope = std::fmax(out.slope, std::sqrt(after / length));
+    out.slope_before = std::fmax(out.slope_before, std::sqrt(before / length));
+    const int first = i * skin.stations * rows, count = skin.stations * rows;
+    out.module_intercept.push_back(intercept_.mean(
+        part(miss, first, count), std::span<const double>(weight_).subspan(static_cast<std::size_t>(first),
+                                                                           static_cast<std::size_t>(count))));
     if (out.module_intercept.back() < out.module_intercept[static_cast<std::size_t>(out.worst_module)])
       out.worst_module = i;
-    for (int s = first; s < first + per_module; ++s) {
-      along += weight_[static_cast<std::size_t>(s)] * m.along[s] * m.along[s];
-      area += weight_[static_cast<std::size_t>(s)];
-    }
   }
   out.slope_along = std::sqrt(along / area);
   out.attribution = attribute(intercept_, weight_, parts);

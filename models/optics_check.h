@@ -24,16 +24,20 @@ struct OpticalResult {
   std::vector<double> module_twist;       ///< rotation of a module less the sensor's reading [rad]
   double sensor_reading = not_given;      ///< what the tracker turns back [rad]
   double worst_twist = not_given;         ///< greatest |module twist| [rad]
-  double slope = not_given;  ///< residual transverse slope rms of the worst module, tilt and focus out [rad]
-  double slope_before = not_given;  ///< rms of the worst module before the fit [rad]
+  /// Residual transverse slope rms of the worst module: every cross-section's own tilt (twist) and focus out
+  /// [rad].
+  double slope = not_given;
+  double slope_before = not_given;  ///< rms of the worst module before that [rad]
   double slope_along = not_given;   ///< longitudinal slope rms over the row [rad]
-  double focal_change = not_given;  ///< of the module with the greatest one [m]
+  double focal_change = not_given;  ///< of the best-fit parabola, cross-section with the greatest one [m]
   double focal_shift = not_given;   ///< along the axis, least squares on the miss, likewise [m]
   double receiver_shift =
       not_given;  ///< greatest distance of the receiver from the moved focus, any station [m]
   double receiver_lateral = not_given, receiver_axial = not_given;  ///< there, collector axes [m]
-  int worst_module = 0;                                             ///< the one that catches least
-  Attribution attribution;                                          ///< twist, receiver, focus, ribs
+  double rim_deflection =
+      not_given;            ///< greatest of the mirror at the rims, along its normal, against the tube [m]
+  int worst_module = 0;     ///< the one that catches least
+  Attribution attribution;  ///< twist, receiver, focus, ribs
 };
 
 class OpticsCheck {
@@ -53,6 +57,8 @@ class OpticsCheck {
   };
   Motion motion(const PoseModel& pose, const Eigen::MatrixXd& amplitudes) const;
   OpticalResult look_at(const Motion& all, int column) const;
+  void look_at_receiver(const Eigen::Vector2d& receiver, const Eigen::Vector2d& vertex, double twist,
+                        OpticalResult& out) const;
 
   const RowModel& row_;
   Parabola parabola_;

@@ -110,6 +110,7 @@ RowModel::RowModel(Collector collector, std::vector<double> stations)
   fixed.leftCols(4) = fem::assemble_fixed_end_forces(collector_.body, members);
   make_outputs(fixed);
   loads_ = std::move(loads);
+  make_fold();
 }
 
 // Columns of the pressure patterns through the transposed skin operator; the first four columns are left
@@ -229,6 +230,34 @@ void RowModel::make_outputs(const MatrixXd& fixed_ends) {
 
   const fem::SparseMatrix ends = fem::assemble_end_forces(collector_.body);
   end_force = {MatrixXd(ends * B) + fixed_ends, ends * J};
+}
+
+void RowModel::make_fold() {
+  std::vector<std::vector<int>> sums;
+  const auto alone = [&](int column) { sums.push_back({column}); };
+  for (int c = 0; c < 4; ++c) alone(c);
+  for (const Pattern b : {Pattern::uniform, Pattern::edge_plus, Pattern::edge_minus, Pattern::line}) {
+    sums.emplace_back();
+    for (int m = 0; m < columns_.modules; ++m) sums.back().push_back(columns_.basis(m, b));
+  }
+  for (int m = 0; m < columns_.modules; ++m) alone(columns_.basis(m, Pattern::linear));
+  for (int i = 0; i < columns_.hats; ++i) alone(columns_.hat(i));
+  alone(columns_.stand_gravity());
+  alone(columns_.stand_wind());
+  fold_ = MatrixXd::Zero(columns_.all(), static_cast<int>(sums.size()));
+  for (std::size_t s = 0; s < sums.size(); ++s) {
+    fold_column_.push_back(sums[s][0]);
+    for (int c : sums[s]) fold_(c, static_cast<int>(s)) = 1;
+  }
+  folded_ends_ = end_force.held * fold_.topRows(columns_.body());
+}
+
+MatrixXd RowModel::end_forces(const PoseModel& pose, const MatrixXd& amplitudes) const {
+  const MatrixXd sums = amplitudes(fold_column_, Eigen::all);
+  if ((fold_ * sums - amplitudes).cwiseAbs().maxCoeff() > 1e-12 * amplitudes.cwiseAbs().maxCoeff())
+    return evaluate(end_force, pose, amplitudes);
+  const MatrixXd per_sum = folded_ends_ + end_force.joint * (pose.bearing_motion * fold_);
+  return per_sum * sums;
 }
 
 MatrixXd RowModel::evaluate(const LinearOutput& output, const PoseModel& pose,

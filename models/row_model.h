@@ -91,6 +91,11 @@ class RowModel {
   Eigen::MatrixXd evaluate(const LinearOutput& output, const PoseModel& pose,
                            const Eigen::MatrixXd& amplitudes) const;
 
+  /// End forces of many winds in one pose, cheaply: all modules see the same pattern but for their own linear
+  /// part (twist feedback), so few sums of columns span every wind. Falls back on evaluate where that does
+  /// not hold.
+  Eigen::MatrixXd end_forces(const PoseModel& pose, const Eigen::MatrixXd& amplitudes) const;
+
   /// Nodal loads on the body for given amplitudes, (6 #nodes), collector axes [N, N m].
   Eigen::VectorXd nodal_loads(const Eigen::VectorXd& amplitudes) const {
     return loads_ * amplitudes.head(columns_.body());
@@ -110,6 +115,7 @@ class RowModel {
 
  private:
   Eigen::MatrixXd body_loads();
+  void make_fold();
   void make_outputs(const Eigen::MatrixXd& fixed_ends);
 
   Collector collector_;
@@ -120,6 +126,9 @@ class RowModel {
   std::vector<LinearOutput> stand_posts_;  ///< 12 end forces of the post; held: weight, wind; joint: its head
   std::vector<Integral> integrals_;        ///< (#body columns) x #modules
   Eigen::MatrixXd loads_, load_totals_;
+  Eigen::MatrixXd fold_;          ///< #columns x #sums: which columns every sum adds up
+  std::vector<int> fold_column_;  ///< the amplitude each sum is read from
+  Eigen::MatrixXd folded_ends_;   ///< end_force.held of the sums
 };
 
 }  // namespace focalframe::models

@@ -81,6 +81,11 @@ StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site) {
           "no strength rule asked for: unfactored actions against yield, not judged"};
 }
 
+StrengthCheck::StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {
+  for (const fem::Member& member : row.collector().body.members)
+    of_member_.push_back(&result_.groups[member.group]);
+}
+
 const std::vector<ActionFactors>& StrengthCheck::factors(StateKind kind) const {
   return kind == StateKind::stuck ? rule_.accidental : rule_.usual;
 }
@@ -95,14 +100,14 @@ void StrengthCheck::add(const PoseModel& pose, const std::vector<StateLoads>& st
 }
 
 void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
-                          const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads, int variant) {
+                          const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads, int variant,
+                          StressUse& worst) const {
   const fem::Section& section = frame.sections[static_cast<std::size_t>(member.section)];
   const fem::Material& material = frame.materials[static_cast<std::size_t>(member.material)];
   const double stress = std::max(fem::von_mises_bound(section, at_end(ends, false)),
                                  fem::von_mises_bound(section, at_end(ends, true)));
   const double allowed = material.yield * rule_.on_yield;
   const double used = allowed > 0 ? stress / allowed : 0;
-  StressUse& worst = result_.groups[member.group];
   if (!worst.part.empty() && (allowed > 0 ? used <= worst.used : stress <= worst.stress)) return;
   worst = {stress, allowed, used, member.name, loads.state, loads.spread[static_cast<std::size_t>(variant)]};
 }
@@ -118,7 +123,7 @@ void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLo
     amplitudes.middleCols(at, loads.wind.cols()) = loads.wind;
     at += static_cast<int>(loads.wind.cols());
   }
-  const MatrixXd forces = row_.evaluate(row_.end_force, pose, amplitudes);
+  const MatrixXd forces = row_.end_forces(pose, amplitudes);
   const fem::Frame& frame = row_.collector().body;
   VectorXd ends(12);
   at = 1;
@@ -128,7 +133,7 @@ void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLo
         for (const ActionFactors& f : factors(loads.state.kind)) {
           const int first = 12 * static_cast<int>(m);
           ends = f.permanent * forces.block<12, 1>(first, 0) + f.wind * forces.block<12, 1>(first, at);
-          judge(frame.members[m], frame, ends, loads, v);
+          judge(frame.members[m], frame, ends, loads, v, *of_member_[m]);
         }
 }
 
@@ -159,7 +164,8 @@ void StrengthCheck::add_stands(const PoseModel& pose, const StateLoads& loads) {
       const double gathered = stand.driven ? loads.gathered : 1;
       for (const ActionFactors& f : factors(loads.state.kind)) {
         const VectorXd ends = f.permanent * weight + f.wind * gathered * wind.col(v);
-        judge(stand.frame.members[0], stand.frame, ends, loads, v);
+        judge(stand.frame.members[0], stand.frame, ends, loads, v,
+              result_.groups[stand.frame.members[0].group]);
       }
       const VectorXd plain = weight + gathered * wind.col(v);
       // Post axes x, y, z are world Z, X, Y.

@@ -76,7 +76,9 @@ struct StateLoads {
 
 class StrengthCheck {
  public:
-  StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {}
+  StrengthCheck(const RowModel& row, StrengthRule rule);
+  StrengthCheck(const StrengthCheck&) = delete;
+  StrengthCheck& operator=(const StrengthCheck&) = delete;
   /// All states of one pose at once.
   void add(const PoseModel& pose, const std::vector<StateLoads>& states);
   const StrengthResult& result() const { return result_; }
@@ -87,11 +89,13 @@ class StrengthCheck {
   void add_drive(const PoseModel& pose, const StateLoads& loads);
   void add_stands(const PoseModel& pose, const StateLoads& loads);
   void judge(const fem::Member& member, const fem::Frame& frame,
-             const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant);
+             const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant,
+             StressUse& worst) const;
 
   const RowModel& row_;
   StrengthRule rule_;
   StrengthResult result_;
+  std::vector<StressUse*> of_member_;  ///< every member's group in result_
 };
 
 }  // namespace focalframe::models
