@@ -65,3 +65,19 @@ TEST_CASE("adding c y^2 to the mirror changes the focal length to f / (1 + 4 f c
   CHECK(bent == Approx(1.71 / (1 + 4 * 1.71 * c)).epsilon(1e-13));
   CHECK(bent == Approx(1.711170).margin(5e-7));
 }
+
+// Common practice, no source: y = x^2 / n has its focus n / 4 above the vertex.
+TEST_CASE("y = x^2 / n has its focus at n / 4, and the rays meet there") {
+  const double n[] = {4, 10, 20, 40}, focus[] = {1, 2.5, 5, 10};
+  for (int i = 0; i < 4; ++i) {
+    const double width = 3.0;
+    const Parabola parabola{width, focal_length_from_depth(width, width * width / 4 / n[i])};
+    CHECK(parabola.focal_length == Approx(focus[i]).epsilon(1e-14));
+    for (double x : {0.2, 0.9, 1.5}) {
+      CHECK(parabola.height(x) == Approx(x * x / n[i]).epsilon(1e-14));
+      // An axial ray turns by twice the mirror's slope: where it crosses the axis, by elementary geometry.
+      const double slope = std::atan(2 * x / n[i]);
+      CHECK(x * x / n[i] + x / std::tan(2 * slope) == Approx(focus[i]).epsilon(1e-12));
+    }
+  }
+}
