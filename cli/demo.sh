@@ -7,7 +7,7 @@ design=$(realpath "${1:-$here/models/examples/quillbrook.xml}")
 
 bash "$here/cli/setup.sh"
 mkdir -p "$here/build"
-cmake -S "$here" -B "$here/build" -DCMAKE_BUILD_TYPE=Release -DFOCALFRAME_TESTS=OFF > "$here/build/setup.log" 2>&1 ||
+cmake -S "$here" -B "$here/build" -DCMAKE_BUILD_TYPE=Release > "$here/build/setup.log" 2>&1 ||
   { cat "$here/build/setup.log"; exit 1; }
 echo "Building focalframe (a few minutes the first time) ..."
 cmake --build "$here/build" --parallel "$(nproc)" --target focalframe > "$here/build/build.log" 2>&1 ||
