@@ -36,6 +36,17 @@ void accept(const TroughDesign& design, Violation& v) {
 
 std::vector<Violation> wind_rules(const TroughDesign& design, const loads::CoefficientTable& table) {
   std::vector<Violation> found;
+  if (table.collector_kind == "dish") {
+    Violation v;
+    v.element = "wind";
+    v.attribute = "table";
+    v.text = "Table \"" + table.name +
+             "\" is for dishes: its coefficients are on the area of a disc and its moment on a diameter. A "
+             "trough needs a "
+             "table of its own kind.";
+    v.advice = "Name a trough table, for example table=\"trough-computed\"";
+    return {v};
+  }
   const std::pair<const char*, const WindStateInput*> winds[] = {{"wind/operate", &design.wind.operate},
                                                                  {"wind/turning", &design.wind.turning},
                                                                  {"wind/stow", &design.wind.stow},

@@ -7,6 +7,7 @@
 #include "models/cures.h"
 #include "models/guesses.h"
 #include "models/many_runs.h"
+#include "models/wind_rules.h"
 #include "tests/support/trough_design.h"
 
 using namespace focalframe;
@@ -184,6 +185,33 @@ TEST_CASE("poses that the table does not cover are refused, never extrapolated",
   REQUIRE(gaps.size() == 1);
   CHECK(gaps[0].rule == "table-range");
   CHECK(gaps[0].level == Violation::Level::stop);
+}
+
+TEST_CASE("a dish's table, gusts counted twice and a table far outside its box are refused", "[assess]") {
+  auto d = support::small_row();
+  const auto stops = [&](const loads::CoefficientTable& t) {
+    int count = 0;
+    for (const Violation& v : wind_rules(d, t)) count += v.level == Violation::Level::stop ? 1 : 0;
+    return count;
+  };
+  auto table = support::test_table();
+  CHECK(stops(table) == 0);
+  table.collector_kind = "dish";
+  CHECK(stops(table) == 1);
+  table.collector_kind = "trough";
+  table.kind = loads::CoefficientKind::peak;
+  CHECK(stops(table) == 0);  // peak coefficients on mean winds
+  d.wind.stow.averaging = 3;
+  CHECK(stops(table) == 1);
+  table.kind = loads::CoefficientKind::mean;
+  table.focal_ratio_min = 1.0;  // this row: f / W = 1/3
+  table.focal_ratio_max = 1.2;
+  CHECK(stops(table) == 1);
+  d.accepted.push_back({"another rule", "checked against a tunnel report"});
+  const auto rules = wind_rules(d, table);
+  REQUIRE(rules.size() == 1);
+  d.accepted.back().rule = rules[0].rule;
+  CHECK(stops(table) == 0);
 }
 
 TEST_CASE("every asked state faces both winds", "[assess]") {
