@@ -10,7 +10,7 @@ namespace {
 
 constexpr double pi = std::numbers::pi;
 
-// Lecture notebook of TU Munich (SWELecture, exercise 6).
+// Course notebook of TU Munich (SWELecture, exercise 6).
 const BluffBody chimney{.width = 4.75,
                         .mass_per_length = 2500 * 12.5,
                         .frequency = 0.24,

@@ -52,7 +52,7 @@ TEST_CASE("a multi-storey building gets the printed resonance part", "[loads][dy
 
 TEST_CASE("a 600 m tower gets the printed background, spectrum and resonance",
           "[loads][dynamic][published]") {
-  // Lecture notebook of TU Munich (SWELecture, exercise 6): v_b 40.12 / 1.4 m/s, terrain IV of the German
+  // Course notebook of TU Munich (SWELecture, exercise 6): v_b 40.12 / 1.4 m/s, terrain IV of the German
   // annex (0.56 v_b (z / 10)^0.30 at z = 200 m), L 248.954 m, n 46/600 Hz, h 600, b 60, delta 0.01 pi.
   const DynamicFactors f = dynamic_factors({.width = 60,
                                             .height = 600,
