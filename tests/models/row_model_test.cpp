@@ -135,7 +135,8 @@ TEST_CASE("the condensed row moves as the whole frame does, in any pose", "[row]
             response.displacement.row(full.first_body_node + node).tail<3>().transpose();
         mean += (turn * r).x() / static_cast<double>(c.modules[m].rib_roots.size());
       }
-      CHECK(tubes[static_cast<int>(m)] == Approx(mean).epsilon(1e-7));
+      CHECK(tubes[static_cast<int>(m)] ==
+            Approx(mean).epsilon(1e-7).margin(1e-12));  // face down: no twist at all
     }
   }
 }
@@ -176,6 +177,9 @@ TEST_CASE("twist accumulates from the drive to the ends as torque over stiffness
   d.row.drive_after_module = 0;
   d.purlins.count = 0;
   d.mirror.fixed_to = "ribs";
+  d.receiver.outside_diameter =
+      6 * mm;  // a full-size one, bent sideways by its posts, takes 0.8 % of the twist
+  d.receiver.wall = 1 * mm;
   d.end_plates.twist_stiffness = d.drive.stiffness = std::numeric_limits<double>::infinity();
   auto& f = d.pylons.footing;
   f.sideways = f.along_row = f.upright = f.rocking = std::numeric_limits<double>::infinity();
