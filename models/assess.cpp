@@ -88,6 +88,7 @@ class Check {
     out_.table_confidence = table_.confidence;
     out_.table_source = table_.source;
     out_.zone = d_.wind.zone;
+    out_.cautions = table_.cautions;
     out_.rule = strength_rule(d_.limits, d_.site).text;
     for (StateKind kind : {StateKind::operate, StateKind::turning, StateKind::stow, StateKind::stuck}) {
       const loads::WindAtHeight& wind = winds_.of(kind);

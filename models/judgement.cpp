@@ -175,7 +175,8 @@ void caution(const TroughDesign& d, const Assessment& a, std::vector<std::string
                 std::string(d.purlins.count > 0          ? "their purlins"
                             : d.mirror.sheet_braces_ribs ? "the mirror sheet"
                                                          : "nothing") +
-                "; lateral buckling of the plate ribs is not part of this check.");
+                "; lateral buckling of the plate ribs is not judged here (focalframe modes gives the row's "
+                "buckling factors).");
   if (d.mirror.kind == "sheet")
     out.push_back(
         "The mirror carries no frame load here; a riveted sheet would stiffen twist and slope, a loose one "
@@ -225,6 +226,7 @@ void judge(const TroughDesign& design, Assessment& a) {
                    "lateral buckling of ribs, local buckling of thin walls",
                    "fatigue, temperature, snow, ice, earthquake",
                    "wind along the row and oblique wind",
+                   "play of the drive and the couplings",
                    "row ends and shading of the receiver"};
   remark(design, a);
   caution(design, a, a.cautions);
