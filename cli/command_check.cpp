@@ -89,11 +89,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
 
   for (const models::Violation& v : a.remarks) messages.push_back(message_of(v, lines, options.design_path));
   const std::string hash = input_hash(options.design_text, table->table.name);
-  if (!options.json_path.empty())
-    if (const std::string problem = write_file(options.json_path, trough_json(a, hash)); !problem.empty()) {
-      std::fprintf(stderr, "%s\n", problem.c_str());
-      return bad_input;
-    }
+  const std::size_t warnings = messages.size() + static_cast<std::size_t>(options.warnings);
   if (options.quiet) {
     std::fputs(verdict_line(a).c_str(), stdout);
   } else {
@@ -101,7 +97,17 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
     std::fputs(summary_text(a, hash).c_str(), stdout);
     if (options.verbose) std::fputs(detail_text(a).c_str(), stdout);
   }
-  return verdict_code(a, options, messages.size() + static_cast<std::size_t>(options.warnings));
+  if (options.strict && a.limits_missed == 0 && (!a.not_judged.empty() || warnings > 0))
+    std::printf("STRICT: %zu not judged and %zu warnings count as missed.\n", a.not_judged.size(), warnings);
+  if (!options.json_path.empty())
+    if (const std::string problem = write_file(options.json_path, trough_json(a, hash)); !problem.empty()) {
+      Message m;
+      m.file = options.json_path;
+      m.text = problem;
+      std::fputs(to_text(m).c_str(), stderr);
+      return bad_input;
+    }
+  return verdict_code(a, options, warnings);
 }
 
 }  // namespace focalframe::cli

@@ -27,6 +27,19 @@ Message mechanism_message(const DesignFile& design, const FrameFile& file, const
   return m;
 }
 
+// More than yield somewhere, or a buckling factor below 1.
+bool gives_way(const FrameFile& file, const FrameResults& results) {
+  for (const FrameCase& one : results.cases) {
+    for (std::size_t m = 0; m < one.stresses.size(); ++m) {
+      const double yield =
+          file.frame.materials[static_cast<std::size_t>(file.frame.members[m].material)].yield;
+      if (yield > 0 && one.stresses[m].stress > yield) return true;
+    }
+    if (!one.buckling.empty() && one.buckling.front().factor < 1) return true;
+  }
+  return false;
+}
+
 // Reads, computes, writes JSON; `print` makes the text. Returns the exit code.
 template <class Print>
 int run(const DesignFile& design, const DesignCommand& command, int modes, int buckling, Print print) {
@@ -46,8 +59,14 @@ int run(const DesignFile& design, const DesignCommand& command, int modes, int b
         std::cerr << to_text(m);
         return bad_input;
       }
-    if (!command.quiet) std::cout << print(hash, file, results);
-    return all_met;
+    const bool fails = gives_way(file, results);
+    if (!command.quiet)
+      std::cout << print(hash, file, results);
+    else
+      std::cout << design.name
+                << (fails ? ": GIVES WAY: a member yields or the frame buckles in some case\n"
+                          : ": solved; no member yields and nothing buckles in any case\n");
+    return fails ? criterion_failed : all_met;
   } catch (const fem::Mechanism& mechanism) {
     const Message m = mechanism_message(design, file, mechanism);
     std::cerr << to_text({m}, true);

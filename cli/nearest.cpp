@@ -42,6 +42,14 @@ std::string nearest_name(std::string_view word, const std::vector<std::string>& 
   return best;
 }
 
+std::string with_roman_digit(std::string word) {
+  const char* roman[] = {"I", "II", "III", "IV"};
+  if (word.empty() || word.back() < '1' || word.back() > '4') return word;
+  const auto number = static_cast<std::size_t>(word.back() - '1');
+  word.pop_back();
+  return word + roman[number];
+}
+
 std::string joined(const std::vector<std::string>& words, std::string_view between) {
   std::string result;
   for (const std::string& word : words) {

@@ -18,6 +18,9 @@ bool is_letter(char c) {
   return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z') || static_cast<unsigned char>(c) >= 0x80;
 }
 
+// No quantity of a frame needs more in any unit; beyond it sums and squares stop being numbers.
+constexpr double greatest_number = 1e15;
+
 // Reads a plain number at `at`; from_chars alone would also take "inf" and "nan".
 std::optional<double> read_number(std::string_view text, std::size_t& at) {
   if (at >= text.size() ||
@@ -25,7 +28,7 @@ std::optional<double> read_number(std::string_view text, std::size_t& at) {
     return std::nullopt;
   double value = 0;
   const auto [end, error] = std::from_chars(text.data() + at, text.data() + text.size(), value);
-  if (error != std::errc()) return std::nullopt;
+  if (error != std::errc() || value > greatest_number) return std::nullopt;
   at = static_cast<std::size_t>(end - text.data());
   return value;
 }

@@ -145,7 +145,8 @@ Json cures(const Assessment& a) {
                     {"intercept_ratio", number(c.intercept)},
                     {"moving_torque_N_m", number(c.moving_torque)},
                     {"mass_kg", number(c.mass)},
-                    {"mass_change_kg", number(c.mass_change)}});
+                    {"mass_change_kg", number(c.mass_change)},
+                    {"mirror_lost_m2", c.mirror_lost}});
   }
   return list;
 }

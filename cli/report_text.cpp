@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "cli/messages.h"
 #include "cli/report_units.h"
 #include "fem/units.h"
 
@@ -37,7 +38,7 @@ std::string share(const Criterion& c) {
   }
   const double used = 100 * c.used();
   if (c.met()) return text_of("%.0f %% used", std::min(used, 100.0));
-  return used > 1000 ? text_of("%.0f times over", used / 100)
+  return used > 1000 ? text_of("%.0f times that", used / 100)
                      : text_of("%.*f %% over", used < 101 ? 1 : 0, used - 100);
 }
 
@@ -71,7 +72,8 @@ std::string losses(const Assessment& a) {
   std::string out = text_of("  lost %.2f points: ", 100 * at.loss);
   std::vector<models::PartLoss> parts = at.parts;
   std::sort(parts.begin(), parts.end(), [](const auto& x, const auto& y) { return x.alone > y.alone; });
-  for (std::size_t i = 0; i < std::min<std::size_t>(3, parts.size()); ++i)
+  const std::size_t most = at.loss > 0.0995 ? 2 : 3;  // the line keeps to 80 columns
+  for (std::size_t i = 0; i < std::min(most, parts.size()); ++i)
     out += text_of("%s%s %.2f", i ? ", " : "", parts[i].name.c_str(), 100 * parts[i].alone);
   out += at.interaction <= 0 ? text_of(", less %.2f that cancel\n", -100 * at.interaction)
                              : text_of(", and %.2f together\n", 100 * at.interaction);
@@ -133,9 +135,8 @@ std::string wind_line(const Assessment& a) {
 
 std::string verdict_line(const Assessment& a) {
   std::string tail;
-  if (!a.not_judged.empty())
-    tail += text_of(", %zu thing%s not judged", a.not_judged.size(), a.not_judged.size() == 1 ? "" : "s");
-  if (a.guesses > 0) tail += text_of(", %d input%s guessed", a.guesses, a.guesses == 1 ? " is" : "s are");
+  if (!a.not_judged.empty()) tail += text_of(", %zu not judged", a.not_judged.size());
+  if (a.guesses > 0) tail += text_of(", %d guess%s", a.guesses, a.guesses == 1 ? "" : "es");
   switch (a.verdict) {
     case models::Verdict::holds:
       return text_of("HOLDS: all %d limits met", a.limits_judged) + tail + "\n";
@@ -148,7 +149,7 @@ std::string verdict_line(const Assessment& a) {
 }
 
 std::string summary_text(const Assessment& a, const std::string& hash) {
-  const std::string head = text_of("%.28s: trough %.3g x %.4g m, %.0f kg, %.1f kg/m2", a.name.c_str(),
+  const std::string head = text_of("%.24s: trough %.3g x %.4g m, turning %.0f kg, %.1f kg/m2", a.name.c_str(),
                                    a.aperture, a.length, a.mass, a.mass_per_area);
   std::string out = text_of("%-65s input %.8s\n", head.c_str(), hash.c_str()) + verdict_line(a);
   const auto ask = [&](const char* question, int i, const char* columns) {
@@ -160,7 +161,7 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
   ask("Keeps the focus?", 0, "limit                   decided in");
   out += question_lines(a, Question::focus, 4) + losses(a);
   for (std::size_t i = 0; i < std::min<std::size_t>(1, a.deciding_guesses.size()); ++i)
-    out += "  decided by a guess: " + a.deciding_guesses[i].text + "\n";
+    out += wrapped("decided by a guess: " + a.deciding_guesses[i].text, 2);
   ask("Keeps together?", 1, "");
   out += question_lines(a, Question::together, 2);
   ask("Turns and stays put?", 2, "");
@@ -176,7 +177,7 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
   out += text_of("Proof %s = q A C to %.0e, balance %.0e; half-size elements: slope %.2g %%\n",
                  shown(a.proof.wind_force, models::Quantity::force).c_str(), a.proof.load_error,
                  a.proof.balance, std::abs(100 * a.proof.slope_change));
-  out += text_of("CAUTION %s: %s confidence. A licensed engineer signs, not the tool.\n", a.table.c_str(),
+  out += text_of("CAUTION %s: %s confidence. A licensed engineer signs.\n", a.table.c_str(),
                  a.table_confidence.c_str());
   return out;
 }

@@ -49,10 +49,10 @@ std::string text_of(const char* format, ...) {
   return out;
 }
 
-std::string shown(double value, Quantity quantity, bool fine) {
+std::string shown(double value, Quantity quantity, int extra) {
   if (std::isnan(value)) return "-";
   const Scale s = scale_of(value, quantity);
-  const int digits = s.digits + (fine ? 1 : 0);
+  const int digits = s.digits + extra;
   const double step = std::pow(10.0, -digits);
   const double rounded = std::round(value / s.unit / step) * step;
   return text_of("%.*f %s", digits, rounded == 0 ? 0.0 : rounded, s.name);  // never "-0"
@@ -60,14 +60,12 @@ std::string shown(double value, Quantity quantity, bool fine) {
 
 ShownPair shown_pair(const models::Criterion& c) {
   ShownPair pair;
-  bool fine = false;
-  for (int tries = 0; tries < 2; ++tries) {
-    pair.value = shown(c.value, c.quantity, fine);
+  const Scale s = scale_of(c.value, c.quantity);
+  for (int extra = 0; extra < 5; ++extra) {
+    pair.value = shown(c.value, c.quantity, extra);
     // The limit in the value's unit, without repeating its name.
-    const Scale s = scale_of(c.value, c.quantity);
-    pair.limit = c.judged() ? text_of("%.*f", s.digits + (fine ? 1 : 0), c.limit / s.unit) : "-";
-    fine = c.judged() && pair.value == pair.limit + " " + s.name && c.value != c.limit;
-    if (!fine) break;
+    pair.limit = c.judged() ? text_of("%.*f", s.digits + extra, c.limit / s.unit) : "-";
+    if (!c.judged() || c.value == c.limit || pair.value != pair.limit + " " + s.name) break;
   }
   return pair;
 }

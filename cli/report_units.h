@@ -9,8 +9,8 @@
 namespace focalframe::cli {
 
 /// "96.0 %", "0.82 mrad", "2.8 mm", "149 MPa", "3.68 kN m", "16.4 m/s"; "-" when not a number. Slopes and
-/// twists are in mrad here, never in degrees. `fine` adds one digit.
-std::string shown(double value, models::Quantity quantity, bool fine = false);
+/// twists are in mrad here, never in degrees. `extra` adds digits.
+std::string shown(double value, models::Quantity quantity, int extra = 0);
 
 /// Value and limit of a criterion with enough digits to tell them apart.
 struct ShownPair {

@@ -103,7 +103,7 @@ std::vector<std::string> passing_fixes(const Violation& v, const TroughText& tex
     if (raw == text.raw.end() || !field) continue;
     std::vector<std::string> values = other_readings(*field, raw->second);
     if (field->quantity == Quantity::none)
-      if (const std::string near = nearest_name(raw->second, field->words); !near.empty())
+      if (const std::string near = nearest_name(with_roman_digit(raw->second), field->words); !near.empty())
         values.push_back(near);
     std::vector<std::string> fixes;
     for (const std::string& value : values)

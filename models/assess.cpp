@@ -7,6 +7,7 @@
 #include "fem/units.h"
 #include "loads/pose.h"
 #include "models/judgement.h"
+#include "models/same_frame.h"
 #include "models/trough.h"
 
 namespace focalframe::models {
@@ -20,10 +21,11 @@ constexpr double slope_half_width = 7.5 * deg;
 
 class Check {
  public:
-  Check(const TroughDesign& design, const loads::CoefficientTable& table, int refine)
+  Check(const TroughDesign& design, const loads::CoefficientTable& table, std::shared_ptr<const RowModel> row)
       : d_(design),
         table_(table),
-        row_(build_trough(design, refine), table.stations),
+        owned_(std::move(row)),
+        row_(*owned_),
         optics_(row_, design),
         strength_(row_, strength_rule(design.limits, design.site)),
         winds_(winds_at_axis(design)),
@@ -286,7 +288,8 @@ class Check {
 
   const TroughDesign& d_;
   const loads::CoefficientTable& table_;
-  RowModel row_;
+  std::shared_ptr<const RowModel> owned_;
+  const RowModel& row_;
   OpticsCheck optics_;
   StrengthCheck strength_;
   StateWinds winds_;
@@ -297,13 +300,21 @@ class Check {
 
 }  // namespace
 
+BuiltRow build_row(const TroughDesign& design, const loads::CoefficientTable& table) {
+  return {design, std::make_shared<const RowModel>(build_trough(design), table.stations)};
+}
+
 Assessment assess(const TroughDesign& design, const loads::CoefficientTable& table,
                   const AssessOptions& options) {
-  Check check(design, table, options.refine);
+  const auto built = [&](int refine) {
+    if (refine == 1 && options.built && same_frame(design, options.built->design)) return options.built->row;
+    return std::make_shared<const RowModel>(build_trough(design, refine), table.stations);
+  };
+  Check check(design, table, built(options.refine));
   Assessment out = check.run();
   if (options.discretisation && out.worst_light >= 0) {
     const OpticalRow& worst = out.optics[static_cast<std::size_t>(out.worst_light)];
-    const OpticalResult fine = Check(design, table, 2 * options.refine).again(worst);
+    const OpticalResult fine = Check(design, table, built(2 * options.refine)).again(worst);
     out.proof.slope_change = fine.slope / worst.result.slope - 1;
     out.proof.intercept_change = fine.intercept - worst.result.intercept;
   }

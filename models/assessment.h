@@ -73,6 +73,7 @@ struct Cure {
   bool meets_all = false;
   int missed = 0;
   double intercept = not_given, moving_torque = not_given, mass = not_given, mass_change = not_given;
+  double mirror_lost = 0;  ///< [m^2]
   std::vector<Criterion> still_missed;
 };
 

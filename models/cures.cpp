@@ -114,12 +114,14 @@ std::vector<Idea> ideas_for(const TroughDesign& d, const Assessment& a) {
                    [](TroughDesign& x) -> ProfileInput& { return x.purlins.profile; });
   if (d.row.modules > 2 && (light || torque || missed(a, "wind-up"))) {
     const int fewer = d.row.modules - (d.row.modules > 3 ? 2 : 1);
-    ideas.push_back({"modules", std::to_string(fewer) + " modules on one drive", [=](TroughDesign& x) {
-                       if (x.row.drive_after_module >= 0)
-                         x.row.drive_after_module = static_cast<int>(std::lround(
-                             x.row.drive_after_module * static_cast<double>(fewer) / x.row.modules));
-                       x.row.modules = fewer;
-                     }});
+    ideas.push_back(
+        {"modules", "row cut to " + std::to_string(fewer) + " modules, from " + std::to_string(d.row.modules),
+         [=](TroughDesign& x) {
+           if (x.row.drive_after_module >= 0)
+             x.row.drive_after_module = static_cast<int>(
+                 std::lround(x.row.drive_after_module * static_cast<double>(fewer) / x.row.modules));
+           x.row.modules = fewer;
+         }});
   }
   return ideas;
 }
@@ -130,7 +132,11 @@ class Trials {
  public:
   Trials(const TroughDesign& design, const loads::CoefficientTable& table, const Assessment& start,
          std::vector<Idea> ideas)
-      : design_(design), table_(table), start_(start), ideas_(std::move(ideas)) {}
+      : design_(design),
+        table_(table),
+        start_(start),
+        ideas_(std::move(ideas)),
+        built_(build_row(design, table)) {}
 
   void run(const std::vector<Choice>& choices, const Progress& progress) {
     std::vector<Choice> fresh;
@@ -142,7 +148,7 @@ class Trials {
       for (std::size_t i : c) ideas_[i].apply(changed);
       designs.push_back(changed);
     }
-    const std::vector<Assessment> results = assess_many(designs, table_, progress);
+    const std::vector<Assessment> results = assess_many(designs, table_, progress, &built_);
     for (std::size_t i = 0; i < fresh.size(); ++i)
       if (!std::isnan(results[i].mass)) keep(fresh[i], results[i]);
   }
@@ -181,6 +187,7 @@ class Trials {
 
   static bool better(const Cure& x, const Cure& y) {
     if (x.missed != y.missed) return x.missed < y.missed;
+    if (x.mirror_lost != y.mirror_lost) return x.mirror_lost < y.mirror_lost;
     if (x.changes.size() != y.changes.size()) return x.changes.size() < y.changes.size();
     return x.mass_change < y.mass_change;
   }
@@ -193,6 +200,7 @@ class Trials {
     if (a.worst_light >= 0)
       cure.intercept = a.optics[static_cast<std::size_t>(a.worst_light)].result.intercept;
     cure.moving_torque = std::abs(a.strength.moving.torque);
+    cure.mirror_lost = std::max(0.0, start_.mirror_area - a.mirror_area);
     cure.mass = a.mass + a.stand_mass;
     cure.mass_change = cure.mass - (start_.mass + start_.stand_mass);
     for (const Criterion& c : a.criteria)
@@ -204,6 +212,7 @@ class Trials {
   const loads::CoefficientTable& table_;
   const Assessment& start_;
   std::vector<Idea> ideas_;
+  BuiltRow built_;
   std::vector<Trial> trials_;
   std::set<Choice> tried_;
 };

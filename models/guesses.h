@@ -14,8 +14,9 @@ struct GuessBand {
 };
 GuessBand guess_band(Quantity quantity);
 
-/// Guesses that make a met limit missed or a missed one met somewhere in their band, with the value where it
-/// turns (to 2 % of the band).
+/// Guesses that turn the verdict somewhere in their band, with the value where it turns (to a thirty-second
+/// of the way). The upper end is always tried; the lower one where three times the change seen upwards could
+/// reach a limit.
 std::vector<GuessFinding> deciding_guesses(const TroughDesign& design, const loads::CoefficientTable& table,
                                            const Assessment& assessment, const Progress& progress = {});
 

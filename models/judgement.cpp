@@ -84,7 +84,7 @@ void judge_drive(const TroughDesign& d, Assessment& a) {
     if (use.kind != a.divergence_state.kind || !std::isfinite(a.divergence_speed)) continue;
     Criterion c{Question::drive,
                 "wind-up",
-                "wind-up wind",
+                "mean wind",
                 Quantity::speed,
                 use.at_axis.mean_speed,
                 a.divergence_speed / 2,
@@ -151,6 +151,14 @@ void remark(const TroughDesign& d, Assessment& a) {
               " times over: a slip in a unit is more likely than a frame that weak. Look at its sizes and "
               "the wind.");
   }
+  for (const Criterion& c : a.criteria)
+    if (c.question == Question::together && c.judged() && c.used() > 2) {
+      add(warn, "", "",
+          c.name + " is stressed to " + number_text(c.used()) +
+              " times what is allowed: it would yield, and light and deflections here are those of a frame "
+              "that does not.");
+      break;
+    }
   if (a.worst_light >= 0) {
     const double lost = a.undeformed - a.optics[static_cast<std::size_t>(a.worst_light)].result.intercept;
     if (std::abs(lost) < 1e-6)

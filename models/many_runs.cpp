@@ -13,7 +13,7 @@ namespace focalframe::models {
 
 std::vector<Assessment> assess_many(const std::vector<TroughDesign>& designs,
                                     const loads::CoefficientTable& table,
-                                    const std::function<void(int, int)>& progress) {
+                                    const std::function<void(int, int)>& progress, const BuiltRow* built) {
   std::vector<Assessment> results(designs.size());
   std::atomic<std::size_t> next{0};
   std::mutex telling;
@@ -22,7 +22,7 @@ std::vector<Assessment> assess_many(const std::vector<TroughDesign>& designs,
   const auto work = [&] {
     for (std::size_t i = next++; i < designs.size(); i = next++) {
       try {
-        results[i] = assess(designs[i], table, {.discretisation = false});
+        results[i] = assess(designs[i], table, {.discretisation = false, .built = built});
       } catch (const fem::Mechanism&) {
         // left as not computed
       } catch (const std::invalid_argument&) {

@@ -10,10 +10,11 @@
 
 namespace focalframe::models {
 
-/// Without the discretisation check. A design that has no solution leaves an assessment that is "not
-/// computed".
+/// Without the discretisation check; `built` as in AssessOptions. A design that has no solution leaves an
+/// assessment that is "not computed".
 std::vector<Assessment> assess_many(const std::vector<TroughDesign>& designs,
                                     const loads::CoefficientTable& table,
-                                    const std::function<void(int done, int all)>& progress = {});
+                                    const std::function<void(int done, int all)>& progress = {},
+                                    const BuiltRow* built = nullptr);
 
 }  // namespace focalframe::models
