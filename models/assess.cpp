@@ -7,6 +7,7 @@
 #include "fem/units.h"
 #include "loads/pose.h"
 #include "models/judgement.h"
+#include "models/row_winds.h"
 #include "models/same_frame.h"
 #include "models/trough.h"
 
@@ -15,9 +16,6 @@ namespace {
 
 using Eigen::MatrixXd;
 using Eigen::VectorXd;
-
-// Half width of the secant that gives dCm/dp for the twist feedback.
-constexpr double slope_half_width = 7.5 * deg;
 
 class Check {
  public:
@@ -29,7 +27,7 @@ class Check {
         optics_(row_, design),
         strength_(row_, strength_rule(design.limits, design.site)),
         winds_(winds_at_axis(design)),
-        zone_(loads::zone_factors(design.wind.zone).value_or(loads::ZoneFactors{})) {}
+        on_row_(design, table) {}
 
   Assessment run() {
     describe();
@@ -94,45 +92,8 @@ class Check {
     out_.rule = strength_rule(d_.limits, d_.site).text;
     for (StateKind kind : {StateKind::operate, StateKind::turning, StateKind::stow, StateKind::stuck}) {
       const loads::WindAtHeight& wind = winds_.of(kind);
-      if (!std::isnan(wind.height)) out_.winds.push_back({kind, wind, size_factor(wind)});
+      if (!std::isnan(wind.height)) out_.winds.push_back({kind, wind, on_row_.size_factor(wind)});
     }
-  }
-
-  double size_factor(const loads::WindAtHeight& wind) const {
-    if (!d_.wind.size_factor) return 1;
-    return loads::size_factor(out_.length, out_.aperture, wind.height, wind.turbulence, site_of(d_.site));
-  }
-
-  loads::Coefficients in_zone(const loads::Coefficients& c) const {
-    return {c.Ca * zone_.Ca, c.Cs * zone_.Cs, c.Cm * zone_.Cm};
-  }
-
-  double moment_slope(double pitch) const {
-    if (!std::isnan(d_.wind.moment_slope)) return d_.wind.moment_slope;
-    return zone_.Cm * loads::moment_slope(table_, pitch, slope_half_width);
-  }
-
-  // The first pattern is the table's own profile where it has one.
-  std::vector<Spread> spreads(double pitch) const {
-    const bool own = !loads::profile_at(table_, pitch).empty();
-    return {own ? Spread::profile : Spread::linear, Spread::edge};
-  }
-
-  WindOnRow wind_on_row(const State& state, Spread spread, double offset, bool upper, double pressure) const {
-    const double pitch =
-        loads::wrap_angle(loads::pitch_seen_by_wind(state.elevation, state.wind_from) + offset);
-    WindOnRow wind;
-    wind.wind_from = state.wind_from;
-    wind.coefficients = in_zone(loads::coefficients_at(table_, pitch, upper).value());
-    wind.spread = spread;
-    if (spread == Spread::profile) {
-      wind.profile = loads::profile_at(table_, pitch, upper);
-      for (double& p : wind.profile) p *= zone_.Ca;
-      if (wind.profile.empty()) wind.spread = Spread::linear;
-    }
-    wind.moment_slope = moment_slope(pitch);
-    wind.pressure = pressure;
-    return wind;
   }
 
   // Everything the wind adds to the weight, twist feedback included.
@@ -146,7 +107,8 @@ class Check {
   }
 
   VectorXd mean_wind(const PoseModel& pose, const State& state, Spread spread) {
-    return wind_part(pose, wind_on_row(state, spread, 0, false, winds_.of(state.kind).mean_pressure));
+    return wind_part(pose, on_row_.at(state.elevation, state.wind_from, spread, 0, false,
+                                      winds_.of(state.kind).mean_pressure));
   }
 
   // Weight alone, then both winds in both patterns.
@@ -160,7 +122,7 @@ class Check {
         rows.push_back({state, true, Spread::linear, {}});
         columns.push_back(weight);
       }
-      for (Spread spread : spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from))) {
+      for (Spread spread : on_row_.spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from))) {
         rows.push_back({state, false, spread, {}});
         columns.push_back(weight + mean_wind(pose, state, spread));
       }
@@ -179,26 +141,23 @@ class Check {
     const loads::WindAtHeight& wind = winds_.of(state.kind);
     const bool peak = table_.kind == loads::CoefficientKind::peak;
     const double pressure = peak ? wind.mean_pressure : wind.gust_pressure;
-    const double tolerance = state.kind == StateKind::operate || std::isnan(d_.operation.stow_within)
-                                 ? 0
-                                 : d_.operation.stow_within;
-    // The stow tolerance is already swept as poses of its own; elsewhere it widens the gust angle.
-    const double spread_angle = turbulence_angle + (state.kind == StateKind::stow ? 0 : tolerance);
+    const double spread_angle = on_row_.gust_angle(state.kind);
     StateLoads loads_here;
     loads_here.state = state;
     loads_here.weight = weight_amplitudes(row_, state.elevation);
-    loads_here.gathered = size_factor(wind) * d_.wind.dynamic_factor;
+    loads_here.gathered = on_row_.size_factor(wind) * d_.wind.dynamic_factor;
     loads_here.friction = d_.drive.friction;
     std::vector<VectorXd> columns;
     const double pitch = loads::pitch_seen_by_wind(state.elevation, state.wind_from);
     for (double offset : {-spread_angle, 0.0, spread_angle})
-      for (Spread spread : spreads(pitch)) {
-        columns.push_back(wind_part(pose, wind_on_row(state, spread, offset, true, pressure)));
+      for (Spread spread : on_row_.spreads(pitch)) {
+        columns.push_back(
+            wind_part(pose, on_row_.at(state.elevation, state.wind_from, spread, offset, true, pressure)));
         loads_here.spread.push_back(spread);
       }
     loads_here.wind.resize(row_.columns().all(), static_cast<int>(columns.size()));
     for (std::size_t i = 0; i < columns.size(); ++i) loads_here.wind.col(static_cast<int>(i)) = columns[i];
-    const double divergence = divergence_pressure(row_, pose, moment_slope(pitch));
+    const double divergence = divergence_pressure(row_, pose, on_row_.moment_slope(pitch));
     const double speed = std::sqrt(2 * divergence / wind.density);
     const double used = wind.mean_speed / speed;
     if (std::isnan(out_.divergence_speed) || used > divergence_used_) {
@@ -262,7 +221,7 @@ class Check {
       state = states.front();
     }
     const double pressure = winds_.of(state.kind).mean_pressure;
-    const WindOnRow wind = wind_on_row(state, spread, 0, false, pressure);
+    const WindOnRow wind = on_row_.at(state.elevation, state.wind_from, spread, 0, false, pressure);
     const PoseModel pose = row_.pose(state.elevation);
     const VectorXd unit = wind_amplitudes(row_, state.elevation, wind);
     VectorXd pressures = unit.head(row_.columns().body());
@@ -293,7 +252,7 @@ class Check {
   OpticsCheck optics_;
   StrengthCheck strength_;
   StateWinds winds_;
-  loads::ZoneFactors zone_;
+  RowWinds on_row_;
   Assessment out_;
   double divergence_used_ = 0;
 };
