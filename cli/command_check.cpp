@@ -7,6 +7,8 @@
 
 #include "cli/exit_code.h"
 #include "cli/input_hash.h"
+#include "cli/report/out_folder.h"
+#include "cli/report/trough_report.h"
 #include "cli/report_detail.h"
 #include "cli/report_json.h"
 #include "cli/report_text.h"
@@ -99,14 +101,21 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
   }
   if (options.strict && a.limits_missed == 0 && (!a.not_judged.empty() || warnings > 0))
     std::printf("STRICT: %zu not judged and %zu warnings count as missed.\n", a.not_judged.size(), warnings);
-  if (!options.json_path.empty())
-    if (const std::string problem = write_file(options.json_path, trough_json(a, hash)); !problem.empty()) {
-      Message m;
-      m.file = options.json_path;
-      m.text = problem;
-      std::fputs(to_text(m).c_str(), stderr);
-      return bad_input;
-    }
+  const auto written = [](const std::string& path, const std::string& problem) {
+    if (problem.empty()) return true;
+    Message m;
+    m.file = path;
+    m.text = problem;
+    std::fputs(to_text(m).c_str(), stderr);
+    return false;
+  };
+  if (!options.json_path.empty() &&
+      !written(options.json_path, write_file(options.json_path, trough_json(a, hash))))
+    return bad_input;
+  if (!options.out_folder.empty()) {
+    const auto files = trough_report_files({a, messages, hash, options.design_text});
+    if (!written(options.out_folder, write_report_folder(options.out_folder, files))) return bad_input;
+  }
   return verdict_code(a, options, warnings);
 }
 

@@ -13,6 +13,7 @@ struct CheckOptions {
   std::string design_path;  ///< as given on the command line
   std::string design_text;  ///< the file's text, to make a hash from
   std::string json_path;    ///< empty = no JSON
+  std::string out_folder;   ///< empty = no report
   bool quiet = false;       ///< verdict line only
   bool verbose = false;
   bool strict = false;  ///< what was not judged and what was warned about counts as missed

@@ -39,6 +39,9 @@ void add_design(CLI::App& command, DesignCommand& typed) {
 void add_commands(CLI::App& app, Typed& typed) {
   CLI::App* check = app.add_subcommand("check", "judge a design: focus, strength, drive, ground");
   add_design(*check, typed.check);
+  check
+      ->add_option("--out", typed.check.out_folder, "write the report (HTML, figures, tables) to this folder")
+      ->type_name("FOLDER");
   check->add_flag("--strict", typed.check.strict, "what is not judged or warned about counts as missed");
 
   CLI::App* draft = app.add_subcommand("draft", "write a commented design to start from");

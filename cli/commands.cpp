@@ -7,6 +7,7 @@
 #include "cli/command_modes.h"
 #include "cli/design_file.h"
 #include "cli/exit_code.h"
+#include "cli/report/out_folder.h"
 #include "cli/write_file.h"
 
 namespace focalframe::cli {
@@ -24,6 +25,12 @@ bool read_sound(const DesignCommand& command, DesignFile& design) {
   if (!command.json_path.empty())
     if (const std::string refusal = refuse_result_path(command.json_path, command.design); !refusal.empty()) {
       design.messages = {about_file(command.json_path, refusal)};
+      std::cerr << to_text(design.messages, true);
+      return false;
+    }
+  if (!command.out_folder.empty())
+    if (const std::string refusal = refuse_report_folder(command.out_folder); !refusal.empty()) {
+      design.messages = {about_file(command.out_folder, refusal)};
       std::cerr << to_text(design.messages, true);
       return false;
     }
@@ -48,6 +55,7 @@ int run_check(const DesignCommand& command) {
   options.design_path = command.design;
   options.design_text = design.text;
   options.json_path = command.json_path;
+  options.out_folder = command.out_folder;
   options.quiet = command.quiet;
   options.verbose = command.verbose;
   options.strict = command.strict;

@@ -8,8 +8,9 @@
 namespace focalframe::cli {
 
 struct DesignCommand {
-  std::string design;     ///< path
-  std::string json_path;  ///< empty = none
+  std::string design;      ///< path
+  std::string json_path;   ///< empty = none
+  std::string out_folder;  ///< `check` only: folder of the report; empty = none
   bool quiet = false, verbose = false, strict = false;
   int count = 6;  ///< `modes` only: how many
 };

@@ -2,6 +2,7 @@
 
 #include "cli/draft.h"
 #include "cli/draft_xml.h"
+#include "cli/escaped.h"
 #include "models/schema.h"
 
 namespace focalframe::cli {

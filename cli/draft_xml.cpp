@@ -5,6 +5,7 @@
 #include <cmath>
 #include <cstdio>
 
+#include "cli/escaped.h"
 #include "cli/quantity.h"
 #include "fem/units.h"
 
@@ -49,27 +50,6 @@ std::string number_with_unit(double value, const models::Field& field) {
 }
 
 }  // namespace
-
-std::string escaped(const std::string& text) {
-  std::string result;
-  for (const char c : text) switch (c) {
-      case '&':
-        result += "&amp;";
-        break;
-      case '<':
-        result += "&lt;";
-        break;
-      case '>':
-        result += "&gt;";
-        break;
-      case '"':
-        result += "&quot;";
-        break;
-      default:
-        result += static_cast<unsigned char>(c) < 0x20 ? ' ' : c;
-    }
-  return result;
-}
 
 std::string field_text(const models::Field& field, const models::TroughDesign& design) {
   models::TroughDesign copy = design;

@@ -16,7 +16,4 @@ std::string field_text(const models::Field& field, const models::TroughDesign& d
 std::string attributes_text(const std::string& path, const models::TroughDesign& design,
                             const std::vector<std::string>& attributes = {});
 
-/// The five signs XML needs escaped.
-std::string escaped(const std::string& text);
-
 }  // namespace focalframe::cli

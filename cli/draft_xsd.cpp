@@ -3,6 +3,7 @@
 
 #include "cli/draft.h"
 #include "cli/draft_xml.h"
+#include "cli/escaped.h"
 #include "cli/frame_words.h"
 #include "models/schema.h"
 
