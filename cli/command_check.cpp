@@ -75,8 +75,12 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
   if (has_stop(messages)) return print_problems(messages, options.verbose);
 
   models::Assessment a;
+  models::BuiltRow built;
   try {
-    a = models::assess(design, table->table);
+    built = models::build_row(design, table->table);
+    models::AssessOptions with_row;
+    with_row.built = &built;
+    a = models::assess(design, table->table, with_row);
   } catch (const fem::Mechanism& mechanism) {
     Message m;
     m.file = options.design_path;
@@ -113,7 +117,8 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
       !written(options.json_path, write_file(options.json_path, trough_json(a, hash))))
     return bad_input;
   if (!options.out_folder.empty()) {
-    const auto files = trough_report_files({a, messages, hash, options.design_text});
+    const auto files =
+        trough_report_files({design, table->table, *built.row, a, messages, hash, options.design_text});
     if (!written(options.out_folder, write_report_folder(options.out_folder, files))) return bad_input;
   }
   return verdict_code(a, options, warnings);

@@ -2,6 +2,7 @@
 #include <iostream>
 
 #include "cli/commands.h"
+#include "cli/embedded.h"
 #include "cli/exit_code.h"
 #include "cli/messages.h"
 #include "cli/quantity.h"
@@ -62,7 +63,7 @@ int run_tables(const std::string& name) {
     return all_met;
   }
   std::cout << "Shipped coefficient tables; `focalframe tables NAME` shows one:\n";
-  for (const ShippedTable& shipped : shipped_tables()) {
+  for (const EmbeddedText& shipped : shipped_tables()) {
     const auto read = read_table_text(shipped.text, shipped.name, messages);
     std::cout << "  " << padded(shipped.name, 20)
               << (read ? "confidence " + read->table.confidence : std::string("cannot be read")) << "\n";

@@ -1,8 +1,10 @@
-# Writes a C++ source with the text of files in it: cmake -DOUT=... -DFILES=a;b -P embed.cmake
+# Writes a C++ source with the text of files in it: cmake -DNAME=function -DOUT=... -DFILES=a;b -P embed.cmake
+# The function is declared in cli/embedded.h. XML files go by their name without ending, others by their full name.
 # Raw string literals are cut into pieces below the length that every compiler must accept.
-set(text "// Made from models/tables by cli/embed.cmake.\n#include \"cli/shipped_tables.h\"\n\nnamespace focalframe::cli {\n\nconst std::vector<ShippedTable>& shipped_tables() {\n  static const std::vector<ShippedTable> tables = {\n")
+set(text "// Made by cli/embed.cmake.\n#include \"cli/embedded.h\"\n\nnamespace focalframe::cli {\n\nconst std::vector<EmbeddedText>& ${NAME}() {\n  static const std::vector<EmbeddedText> files = {\n")
 foreach(file ${FILES})
-  get_filename_component(name ${file} NAME_WE)
+  get_filename_component(name ${file} NAME)
+  string(REGEX REPLACE "\\.xml$" "" name ${name})
   file(READ ${file} body)
   set(pieces "")
   string(LENGTH "${body}" length)
@@ -14,6 +16,6 @@ foreach(file ${FILES})
   endwhile()
   string(APPEND text "{\"${name}\",\n${pieces}},\n")
 endforeach()
-string(APPEND text "  };\n  return tables;\n}\n\n}  // namespace focalframe::cli\n")
+string(APPEND text "  };\n  return files;\n}\n\n}  // namespace focalframe::cli\n")
 file(WRITE ${OUT}.new "${text}")
 execute_process(COMMAND ${CMAKE_COMMAND} -E copy_if_different ${OUT}.new ${OUT})

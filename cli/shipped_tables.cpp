@@ -2,6 +2,7 @@
 
 #include <filesystem>
 
+#include "cli/embedded.h"
 #include "cli/nearest.h"
 #include "cli/read_file.h"
 
@@ -10,7 +11,7 @@ namespace focalframe::cli {
 std::optional<ReadTable> find_table(const std::string& name, const std::string& design_path,
                                     const Message& place, std::vector<Message>& messages) {
   std::vector<std::string> names;
-  for (const ShippedTable& table : shipped_tables()) {
+  for (const EmbeddedText& table : shipped_tables()) {
     if (table.name == name) return read_table_text(table.text, table.name, messages);
     names.push_back(table.name);
   }

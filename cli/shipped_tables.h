@@ -11,12 +11,6 @@
 
 namespace focalframe::cli {
 
-struct ShippedTable {
-  std::string name, text;  ///< text: the XML file as it stands in models/tables
-};
-
-const std::vector<ShippedTable>& shipped_tables();
-
 /// The table a design names: a shipped one by its name, else a file, looked for beside the design. What is
 /// wrong is appended to `messages`. `place`: message to copy file, line and head from when the table cannot
 /// be found.

@@ -90,7 +90,12 @@ PortraitState state_of(const Collector& c, const FullFrame& full, const Portrait
     if (b >= 0) body.segment<6>(6 * b) << turn * move, turn * rotation;
   }
   const VectorXd mirror = c.skin.move * body;
-  for (int s = 0; s < c.skin.samples(); ++s) out.mirror.push_back(mirror.segment<3>(3 * s));
+  const VectorXd turned = c.skin.turn * body;
+  for (int s = 0; s < c.skin.samples(); ++s) {
+    out.mirror.push_back(mirror.segment<3>(3 * s));
+    out.turned_across.push_back(turned[2 * s]);
+    out.turned_along.push_back(turned[2 * s + 1]);
+  }
   for (std::size_t m = 0; m < full.frame.members.size(); ++m)
     out.forces.push_back(
         forces_of(full.frame.sections[static_cast<std::size_t>(full.frame.members[m].section)],

@@ -39,9 +39,10 @@ struct MemberForces {
 struct PortraitState {
   State state;
   bool calm = false;
-  std::string words;              ///< "OPERATE 45 deg, back"
-  std::vector<fem::Vec3> moves;   ///< per point, its own axes [m]
-  std::vector<fem::Vec3> mirror;  ///< per mirror point, collector axes [m]
+  std::string words;                                ///< "OPERATE 45 deg, back"
+  std::vector<fem::Vec3> moves;                     ///< per point, its own axes [m]
+  std::vector<fem::Vec3> mirror;                    ///< per mirror point, collector axes [m]
+  std::vector<double> turned_across, turned_along;  ///< rotation of the mirror there about x, about y [rad]
   std::vector<MemberForces> forces;
 };
 

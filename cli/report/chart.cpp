@@ -124,7 +124,7 @@ Drawing draw(const LineChart& chart) {
 }
 
 Drawing draw(const BarChart& chart) {
-  constexpr double names = 150, values = 235, line_height = 24, head = 10, foot = 40;
+  constexpr double names = 150, values = 235, line_height = 24, head = 24, foot = 40;
   const double height = head + line_height * static_cast<double>(chart.bars.size()) + foot;
   Drawing d(640, height, chart.title);
   double most = chart.limit;
@@ -149,7 +149,7 @@ Drawing draw(const BarChart& chart) {
   if (chart.limit > 0) {
     const double x = names + chart.limit * scale;
     d.line({x, head - 6}, {x, floor}, "limit");
-    d.text({x, floor + 30}, chart.limit_name, Anchor::middle, "limit");
+    d.text({x, head - 11}, chart.limit_name, Anchor::middle, "limit");
   }
   d.text({names, floor + 30}, chart.across, Anchor::start);
   return d;

@@ -1,6 +1,7 @@
 #include "cli/report/drawing.h"
 
 #include "cli/escaped.h"
+#include "cli/report/assets.h"
 #include "cli/report_units.h"
 
 namespace focalframe::cli {
@@ -74,7 +75,7 @@ std::string Drawing::element(bool alone) const {
   if (alone) out += text_of(" width=\"%.0f\" height=\"%.0f\"", width_, height_);
   out += text_of(" viewBox=\"0 0 %.0f %.0f\">\n<title>", width_, height_) + escaped(title_) + "</title>\n";
   if (!description_.empty()) out += "<desc>" + escaped(description_) + "</desc>\n";
-  if (alone) out += std::string("<style>") + colour_properties() + drawing_style() + "</style>\n";
+  if (alone) out += "<style>" + asset("colours.css") + asset("drawing.css") + "</style>\n";
   if (alone) out += text_of("<rect class=\"paper\" width=\"%.0f\" height=\"%.0f\"/>\n", width_, height_);
   return out + body_ + "</svg>\n";
 }
@@ -82,35 +83,5 @@ std::string Drawing::element(bool alone) const {
 std::string Drawing::inside_page() const { return element(false); }
 
 std::string Drawing::file() const { return "<?xml version=\"1.0\" encoding=\"UTF-8\"?>\n" + element(true); }
-
-const char* colour_properties() {
-  return R"css(
-:root{--paper:#fdfcf9;--ink:#1d2327;--soft:#5a646b;--rule:#c9cdcf;--wash:#eef0ef;
---one:#14578f;--two:#b4480b;--three:#4b6b3c;--bad:#a3154a;--good:#1f6a5c}
-@media (prefers-color-scheme:dark){:root{--paper:#16191b;--ink:#e8e6e1;--soft:#a9b1b5;--rule:#41484c;--wash:#22272a;
---one:#7fb8ea;--two:#f0a066;--three:#a5cc92;--bad:#ff8fb5;--good:#7fd1bf}}
-@media print{:root{--paper:#fff;--ink:#000;--soft:#444;--rule:#bbb;--wash:#f2f2f2;
---one:#14578f;--two:#b4480b;--three:#4b6b3c;--bad:#a3154a;--good:#1f6a5c}}
-)css";
-}
-
-const char* drawing_style() {
-  return R"css(
-svg text{font:12px system-ui,"Liberation Sans",sans-serif;fill:var(--ink)}
-svg .note{fill:var(--soft)} svg .strong{font-weight:600} svg .small{font-size:10.5px;fill:var(--soft)}
-svg .paper{fill:var(--paper)} svg .wash{fill:var(--wash)}
-svg line,svg polyline{fill:none;stroke-linejoin:round;stroke-linecap:round}
-svg .axis{stroke:var(--ink);stroke-width:1} svg .grid{stroke:var(--rule);stroke-width:.6}
-svg .one,svg .two,svg .three{stroke-width:1.9} svg .one{stroke:var(--one)}
-svg .two{stroke:var(--two);stroke-dasharray:7 3} svg .three{stroke:var(--three);stroke-dasharray:2 3}
-svg .limit{stroke:var(--bad);stroke-width:1.4;stroke-dasharray:10 3 2 3} svg text.limit{stroke:none;fill:var(--bad)}
-svg .mark-one{fill:var(--one)} svg .mark-two{fill:var(--paper);stroke:var(--two);stroke-width:1.6}
-svg .mark-three{fill:none;stroke:var(--three);stroke-width:1.6}
-svg text.one{stroke:none;fill:var(--one)} svg text.two{stroke:none;fill:var(--two)} svg text.three{stroke:none;fill:var(--three)}
-svg .bar{fill:var(--one)} svg .bar-over{fill:var(--bad)} svg .bar-idle{fill:var(--rule)}
-svg .still{stroke:var(--rule);stroke-width:1} svg .moved{stroke:var(--one);stroke-width:1.3}
-svg .moved-skin{stroke:var(--two);stroke-width:1.1} svg .ground{stroke:var(--soft);stroke-width:1}
-)css";
-}
 
 }  // namespace focalframe::cli

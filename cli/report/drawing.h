@@ -46,9 +46,4 @@ class Drawing {
   std::string title_, description_, body_;
 };
 
-/// CSS of the classes used by all drawings; takes its colours from custom properties.
-const char* drawing_style();
-/// The custom properties themselves, light, dark and print.
-const char* colour_properties();
-
 }  // namespace focalframe::cli

@@ -2,6 +2,7 @@
 
 /// One self-contained HTML page: no network, light and dark, A4 in print. Knows nothing of troughs.
 
+#include <set>
 #include <string>
 #include <vector>
 
@@ -23,9 +24,11 @@ struct Page {
 };
 std::string to_html(const Page& page);
 
-/// Cells are text and are escaped; a column named with a leading '>' is set flush right.
+/// Cells are text and are escaped; a column named with a leading '>' is set flush right. `flagged`: rows that
+/// stand out, by index.
 std::string html_table(const std::vector<std::string>& columns,
-                       const std::vector<std::vector<std::string>>& rows);
+                       const std::vector<std::vector<std::string>>& rows,
+                       const std::set<std::size_t>& flagged = {});
 std::string html_paragraph(const std::string& text);
 std::string html_list(const std::vector<std::string>& items);
 std::string html_figure(const Figure& figure);

@@ -27,17 +27,22 @@ std::string heading(const char* words) { return std::string("<h3>") + words + "<
 std::string criteria_table(const Assessment& a) {
   const char* questions[] = {"Keeps the focus?", "Keeps together?", "Turns and stays put?", "Stands?"};
   std::vector<std::vector<std::string>> rows;
+  std::set<std::size_t> missed;
+  std::string asked;
   for (const Criterion& c : a.criteria) {
     const ShownPair pair = shown_pair(c);
-    rows.push_back(
-        {questions[static_cast<int>(c.question)], c.name, pair.value,
-         c.judged() ? std::string(c.at_least ? "at least " : "at most ") + pair.limit : "no limit given",
-         !c.judged() ? "not judged"
-         : c.met()   ? "met"
-                     : "MISSED",
-         c.decided_in, c.note});
+    const std::string question = questions[static_cast<int>(c.question)];
+    if (!c.met()) missed.insert(rows.size());
+    const std::string limit =
+        c.judged() ? std::string(c.at_least ? "at least " : "at most ") + pair.limit : "no limit given";
+    rows.push_back({question == asked ? "" : question, c.name, pair.value, limit,
+                    !c.judged() ? "not judged"
+                    : c.met()   ? "met"
+                                : "MISSED",
+                    c.decided_in, c.note});
+    asked = question;
   }
-  return html_table({"question", "what", ">value", ">limit", "result", "decided in", "how"}, rows);
+  return html_table({"question", "what", ">value", ">limit", "result", "decided in", "how"}, rows, missed);
 }
 
 std::string verdict_body(const TroughReport& r) {
