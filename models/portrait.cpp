@@ -42,10 +42,17 @@ void place_parts(const Collector& c, const FullFrame& full, Portrait& out) {
 
 fem::LoadCase load_case(const RowModel& row, const FullFrame& full, const PortraitRequest& request) {
   const double elevation = request.state.elevation;
-  const VectorXd wind = request.amplitudes - weight_amplitudes(row, elevation);
+  VectorXd wind = request.amplitudes - weight_amplitudes(row, elevation);
+  // The receiver's drag acts along its members: end forces need it there, not at the nodes.
+  const Vec3 drag(0, wind[Columns::receiver_y], wind[Columns::receiver_z]);
+  wind[Columns::receiver_y] = wind[Columns::receiver_z] = 0;
   fem::LoadCase load;
   load.gravity = {0, 0, -standard_gravity};
   load.nodes = in_world(full, row.nodal_loads(wind), elevation);
+  const Vec3 on_receiver = loads::world_to_collector(elevation).transpose() * drag;
+  if (!drag.isZero(0))
+    for (int m : row.collector().receiver_members)
+      load.lines.push_back({full.first_body_member + m, 0, 1, on_receiver, on_receiver, false});
   const Vec3 across(0, wind[row.columns().stand_wind()], 0);
   for (int m = 0; m < full.first_body_member; ++m)
     if (full.frame.members[static_cast<std::size_t>(m)].group == "pylon" && !across.isZero(0))

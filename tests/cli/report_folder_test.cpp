@@ -1,5 +1,7 @@
 // The report folder: what is in it, that it stands whole, and that it touches nothing else.
 
+#include <tinyxml2.h>
+
 #include <catch2/catch.hpp>
 #include <filesystem>
 #include <fstream>
@@ -11,7 +13,6 @@
 #include "cli/report/trough_report.h"
 #include "cli/report/view.h"
 #include "cli/report/vtu.h"
-#include "cli/xml.h"
 #include "models/portrait_states.h"
 #include "tests/support/trough_design.h"
 
@@ -55,6 +56,13 @@ std::string text_at(const fs::path& path) {
   return {std::istreambuf_iterator<char>(in), {}};
 }
 
+// Name of the root element, empty when the text is not well-formed.
+std::string root_of(const std::string& text) {
+  tinyxml2::XMLDocument document;
+  return document.Parse(text.c_str(), text.size()) == tinyxml2::XML_SUCCESS ? document.RootElement()->Name()
+                                                                            : "";
+}
+
 }  // namespace
 
 TEST_CASE("the report page needs nothing from elsewhere and has every place it points to", "[report]") {
@@ -82,9 +90,7 @@ TEST_CASE("every drawing of a report is well-formed and says what it shows", "[r
     CHECK(text.find("<title>") != std::string::npos);
     CHECK(text.find("nan") == std::string::npos);
     CHECK(text.find("inf") == std::string::npos);
-    const XmlFile file = parse_xml(text, name);
-    CHECK(file.messages.empty());
-    CHECK(file.root.name == "svg");
+    CHECK(root_of(text) == "svg");
   }
   CHECK(drawings >= 6);
 }
@@ -161,6 +167,6 @@ TEST_CASE("the frame's view holds every member and every state, and names them",
   const std::string vtu = frame_vtu(p, 0);
   CHECK(vtu.find("NumberOfPoints=\"" + std::to_string(p.points.size()) + "\" NumberOfCells=\"" +
                  std::to_string(p.members.size()) + "\"") != std::string::npos);
-  CHECK(parse_xml(vtu, "frame").messages.empty());
-  CHECK(parse_xml(mirror_vtu(p, 0), "mirror").messages.empty());
+  CHECK(root_of(vtu) == "VTKFile");
+  CHECK(root_of(mirror_vtu(p, 0)) == "VTKFile");
 }
