@@ -8,6 +8,7 @@
 #include "cli/command_line_fault.h"
 #include "cli/commands.h"
 #include "cli/exit_code.h"
+#include "cli/manual.h"
 #include "fem/mechanism.h"
 
 namespace focalframe::cli {
@@ -17,16 +18,22 @@ constexpr const char* examples = R"(Examples:
   focalframe draft trough my-row.xml --aperture 2.4m --length 24m
   focalframe check my-row.xml
   focalframe check my-row.xml --json my-row.json --strict
+  focalframe check my-row.xml --out my-row-report
+  focalframe why receiver shift
   focalframe tables
 
 Exit codes: 0 all limits met, 1 a limit is missed, 2 bad input, 3 no solution.
 1 mrad is 1 mm in 1 m; light caught is the intercept factor.)";
+
+const std::vector<std::string> draft_kinds{"trough", "frame", "xsd"};
 
 struct Typed {
   DesignCommand check, modes;
   DraftCommand draft;
   std::map<std::string, std::string> sizes;
   std::string table;
+  std::vector<std::string> why;
+  bool manual = false, completion = false;
 };
 
 void add_design(CLI::App& command, DesignCommand& typed) {
@@ -37,6 +44,8 @@ void add_design(CLI::App& command, DesignCommand& typed) {
 }
 
 void add_commands(CLI::App& app, Typed& typed) {
+  app.add_flag("--man", typed.manual, "print the man page")->group("");
+  app.add_flag("--completion", typed.completion, "print the completion script of bash")->group("");
   CLI::App* check = app.add_subcommand("check", "judge a design: focus, strength, drive, ground");
   add_design(*check, typed.check);
   check
@@ -48,7 +57,7 @@ void add_commands(CLI::App& app, Typed& typed) {
   draft->add_option("KIND", typed.draft.kind, "trough, frame, or xsd (for editors)")
       ->required()
       ->type_name("")
-      ->check(CLI::IsMember({"trough", "frame", "xsd"}));
+      ->check(CLI::IsMember(draft_kinds));
   draft->add_option("FILE", typed.draft.file, "file to write; never over an existing one")
       ->required()
       ->type_name("");
@@ -62,13 +71,44 @@ void add_commands(CLI::App& app, Typed& typed) {
   add_design(*modes, typed.modes);
   modes->add_option("--count", typed.modes.count, "how many")->type_name("NUMBER")->check(CLI::Range(1, 200));
 
+  CLI::App* why = app.add_subcommand("why", "what a word of the report or of the design file means");
+  why->add_option("WHAT", typed.why, "such as: light caught, STUCK, depth-at-tube")->type_name("");
+
   CLI::App* tables = app.add_subcommand("tables", "wind coefficient tables: list them, or show one");
   tables->add_option("NAME", typed.table, "name of a shipped table or path of your own")->type_name("");
 }
 
+ManualOption manual_option(const CLI::Option& option) {
+  ManualOption out;
+  out.names = option.get_positional() ? option.get_name() : option.get_name(false, true);
+  out.value = option.get_items_expected_max() == 0 ? "" : option.get_type_name();
+  out.text = option.get_description();
+  return out;
+}
+
+Manual manual_of(const CLI::App& app) {
+  Manual manual;
+  manual.about = app.get_description();
+  manual.version = FOCALFRAME_VERSION;
+  manual.examples = examples;
+  for (const CLI::App* command : app.get_subcommands({})) {
+    ManualCommand c{command->get_name(), command->get_description(), {}, {}};
+    for (const CLI::Option* option : command->get_options())
+      (option->get_positional() ? c.positionals : c.options).push_back(manual_option(*option));
+    if (c.name == "draft") c.positionals.front().words = draft_kinds;
+    manual.commands.push_back(c);
+  }
+  return manual;
+}
+
 int run(CLI::App& app, Typed& typed) {
+  if (typed.manual || typed.completion) {
+    std::cout << (typed.manual ? man_page(manual_of(app)) : bash_completion(manual_of(app)));
+    return all_met;
+  }
   if (app.got_subcommand("check")) return run_check(typed.check);
   if (app.got_subcommand("modes")) return run_modes(typed.modes);
+  if (app.got_subcommand("why")) return run_why(typed.why);
   if (app.got_subcommand("tables")) return run_tables(typed.table);
   if (app.got_subcommand("draft")) {
     for (const std::string& name : draft_size_options())

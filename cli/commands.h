@@ -28,6 +28,9 @@ int run_draft(const DraftCommand& command);
 /// Lists the shipped coefficient tables, or shows one (name or path).
 int run_tables(const std::string& name);
 
+/// Says what a word of the report or of the design file means; lists the topics when no word is given.
+int run_why(const std::vector<std::string>& words);
+
 /// Options of `draft trough` that take a size.
 const std::vector<std::string>& draft_size_options();
 

@@ -19,7 +19,9 @@ std::string plain(double value) {
   return buffer.data();
 }
 
-std::string number_with_unit(double value, const models::Field& field) {
+}  // namespace
+
+std::string value_text(double value, const models::Field& field) {
   if (std::isinf(value)) return "rigid";
   switch (field.quantity) {
     case Quantity::ratio:
@@ -44,19 +46,19 @@ std::string number_with_unit(double value, const models::Field& field) {
       return std::abs(value) >= 1e6 ? plain(value / MN) + " MN/m" : plain(value / kN) + " kN/m";
     case Quantity::twist_stiffness:
       return std::abs(value) >= 1e6 ? plain(value / MN) + " MN m/rad" : plain(value / kN) + " kN m/rad";
-    default:
-      return plain(value) + " " + common_units(field.quantity).front();
+    default: {
+      const auto units = common_units(field.quantity);
+      return units.empty() ? plain(value) : plain(value) + " " + units.front();
+    }
   }
 }
-
-}  // namespace
 
 std::string field_text(const models::Field& field, const models::TroughDesign& design) {
   models::TroughDesign copy = design;
   if (field.word_slot && !field.word_slot(copy)->empty()) return *field.word_slot(copy);
   const models::Slot slot = field.slot(copy);
   if (const auto* number = std::get_if<double*>(&slot))
-    return std::isnan(**number) ? "" : number_with_unit(**number, field);
+    return std::isnan(**number) ? "" : value_text(**number, field);
   if (const auto* count = std::get_if<int*>(&slot)) return std::to_string(**count);
   if (const auto* yes = std::get_if<bool*>(&slot)) return **yes ? "yes" : "no";
   return *std::get<std::string*>(slot);

@@ -9,7 +9,10 @@
 
 namespace focalframe::cli {
 
-/// The value as a user would write it, with its unit; empty when the field holds nothing.
+/// A number as a user would write it into this field, with its unit.
+std::string value_text(double value, const models::Field& field);
+
+/// What the field holds, likewise; empty when it holds nothing.
 std::string field_text(const models::Field& field, const models::TroughDesign& design);
 
 /// ` name="value"` for those of `attributes` that are given, then basis; all given ones when empty.

@@ -16,4 +16,7 @@ const std::vector<EmbeddedText>& shipped_tables();
 /// cli/report/assets and three.min.js, by file name.
 const std::vector<EmbeddedText>& report_assets();
 
+/// cli/why.txt alone.
+const std::vector<EmbeddedText>& explanation_texts();
+
 }  // namespace focalframe::cli

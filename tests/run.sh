@@ -2,7 +2,7 @@
 # Installs what is missing, builds everything and runs the tests. Arguments go to ctest (e.g. -R "torsion").
 set -eu
 here=$(cd "$(dirname "$0")/.." && pwd)
-bash "$here/cli/setup.sh" catch2 clang-format libxml2-utils
+bash "$here/cli/setup.sh" catch2 clang-format libxml2-utils chromium
 mkdir -p "$here/build"
 cmake -S "$here" -B "$here/build" -DCMAKE_BUILD_TYPE=Release -DFOCALFRAME_TESTS=ON > "$here/build/setup.log" 2>&1 ||
   { cat "$here/build/setup.log"; exit 1; }

@@ -205,3 +205,22 @@ TEST_CASE("the shipped tables are listed and shown", "[command]") {
   CHECK(one.code == 0);
   CHECK_THAT(one.text, Contains("pitch deg") && Contains("Source:"));
 }
+
+TEST_CASE("the man page and the completion know every command and every option of the help",
+          "[command line]") {
+  const Folder folder;
+  const Run man = folder.run("--man"), completion = folder.run("--completion");
+  REQUIRE(man.code == 0);
+  REQUIRE(completion.code == 0);
+  for (const std::string command : {"check", "draft", "modes", "tables", "why"}) {
+    CHECK_THAT(man.text, Contains(".SS " + command));
+    CHECK_THAT(completion.text, Contains("    " + command + ") words="));
+    const std::string help = folder.run(command + " --help").text;
+    for (std::size_t at = help.find(" --"); at != std::string::npos; at = help.find(" --", at + 1)) {
+      const std::string option = help.substr(at + 1, help.find_first_of(" ,\n", at + 1) - at - 1);
+      if (option.size() < 4 || help.find("Examples:") < at) continue;
+      INFO(command << " " << option);
+      CHECK_THAT(completion.text, Contains(option));
+    }
+  }
+}
