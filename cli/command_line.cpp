@@ -14,6 +14,8 @@
 namespace focalframe::cli {
 namespace {
 
+constexpr const char* about = "does this frame hold the focus? Checks support frames of parabolic troughs.";
+
 constexpr const char* examples = R"(Examples:
   focalframe draft trough my-row.xml --aperture 2.4m --length 24m
   focalframe check my-row.xml
@@ -88,7 +90,7 @@ ManualOption manual_option(const CLI::Option& option) {
 
 Manual manual_of(const CLI::App& app) {
   Manual manual;
-  manual.about = app.get_description();
+  manual.about = about;
   manual.version = FOCALFRAME_VERSION;
   manual.examples = examples;
   for (const CLI::App* command : app.get_subcommands({})) {
@@ -127,8 +129,7 @@ int fail(const char* what, int code) {
 }  // namespace
 
 int run_command_line(const std::vector<std::string>& arguments) try {
-  CLI::App app("focalframe: does this frame hold the focus? Checks support frames of parabolic troughs.",
-               "focalframe");
+  CLI::App app(std::string("focalframe: ") + about, "focalframe");
   app.set_version_flag("--version", std::string("focalframe ") + FOCALFRAME_VERSION);
   app.footer(examples);
   Typed typed;

@@ -29,7 +29,6 @@ TEST_CASE("every element and attribute of a trough's design is explained", "[why
     for (const models::Field& field : element.fields) {
       const std::string text = explain(element.path.substr(element.path.rfind('/') + 1) + " " + field.name);
       INFO(element.path << " " << field.name);
-      CHECK(text.find(field.help) == text.rfind(field.help));
       CHECK(text.find("<" + element.path + " " + field.name + ">") != std::string::npos);
     }
   }
