@@ -22,6 +22,8 @@ std::string geometry(const Assessment& a) {
   out +=
       text_of("  mirror %.2f m2 (flat aperture between the end ribs: what coefficients are multiplied by)\n",
               a.mirror_area);
+  if (std::isfinite(a.tube_torsion))
+    out += text_of("  torsional stiffness of the torque tube GJ %.3g kN m2\n", a.tube_torsion / 1e3);
   out += text_of("  what turns %.0f kg, pylons and heads %.0f kg\n", a.mass, a.stand_mass);
   out += text_of("  rotation axis %.0f mm %s the mirror vertex; centre of gravity %.0f mm %s the axis\n",
                  std::abs(a.axis_to_vertex) / mm, a.axis_to_vertex >= 0 ? "behind" : "in front of",
@@ -97,6 +99,17 @@ std::string loads_text(const Assessment& a) {
   for (const auto& [group, use] : a.strength.groups)
     out += text_of("  %-15s %6.0f of %4.0f MPa  %-20s %s\n", group.c_str(), use.stress / MPa,
                    use.allowed / MPa, models::place_text(use.state).c_str(), use.part.c_str());
+  if (!a.strength.buckling.empty())
+    out += section("Buckling of members, worst of each group") +
+           wrapped(
+               "EN 1993-1-1 6.3.1 curves (aluminium EN 1999-1-1 class B), plates on edge also sideways by "
+               "6.3.2; end moments amplified and added linearly; 100 % = at the limit",
+               2);
+  for (const auto& [group, use] : a.strength.buckling)
+    out += text_of("  %-16s %5.1f %%  %8s of %-8s  %-20s %s\n", group.c_str(), 100 * use.used,
+                   shown(use.compression, Quantity::force).c_str(),
+                   shown(use.resistance, Quantity::force).c_str(), models::place_text(use.state).c_str(),
+                   use.part.c_str());
   out += section("Drive torque while tracking and turning, greatest of both winds");
   for (const auto& [elevation, torque] : a.strength.moving_torque)
     out += text_of("  %4.0f deg  %9s\n", elevation / deg, shown(torque, Quantity::torque).c_str());

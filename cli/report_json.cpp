@@ -115,6 +115,15 @@ Json strength(const Assessment& a) {
                       {"allowed_Pa", use.allowed > 0 ? Json(use.allowed) : Json(nullptr)},
                       {"state", state(use.state)},
                       {"pattern", models::spread_text(use.spread)}});
+  Json buckling = Json::array();
+  for (const auto& [group, use] : a.strength.buckling)
+    buckling.push_back({{"group", group},
+                        {"part", use.part},
+                        {"used_ratio", number(use.used)},
+                        {"compression_N", number(use.compression)},
+                        {"resistance_N", number(use.resistance)},
+                        {"state", state(use.state)},
+                        {"pattern", models::spread_text(use.spread)}});
   Json curve = Json::array();
   for (const auto& [elevation, torque] : a.strength.moving_torque)
     curve.push_back({{"elevation_rad", elevation}, {"moving_torque_N_m", torque}});
@@ -128,6 +137,7 @@ Json strength(const Assessment& a) {
                       {"state", state(foot->state)}});
   return {{"rule", a.rule},
           {"groups", groups},
+          {"buckling", buckling},
           {"moving_torque_N_m", number(std::abs(a.strength.moving.torque))},
           {"holding_torque_N_m", number(std::abs(a.strength.holding.torque))},
           {"moving_torque_by_elevation", curve},

@@ -30,7 +30,7 @@ std::string answer_text(Answer answer) {
 // "1.0 points short", "55 % used", "5 % over", "reported".
 std::string share(const Criterion& c) {
   if (!c.judged()) return "not judged";
-  if (c.quantity == models::Quantity::ratio) {
+  if (c.quantity == models::Quantity::ratio && c.question == Question::focus) {
     const double points = std::abs(c.value - c.limit) * 100;
     const int digits = points < 0.1 ? 2 : 1;
     if (c.at_least) return text_of(c.met() ? "%.*f points spare" : "%.*f points short", digits, points);

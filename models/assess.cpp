@@ -6,9 +6,12 @@
 
 #include "fem/units.h"
 #include "loads/pose.h"
+#include "models/catalogue.h"
 #include "models/judgement.h"
+#include "models/profile.h"
 #include "models/row_winds.h"
 #include "models/same_frame.h"
+#include "models/torque_box.h"
 #include "models/trough.h"
 
 namespace focalframe::models {
@@ -80,6 +83,7 @@ class Check {
       const double rest = -row_.body_mass * out_.centre_below_axis + number * cw.mass * lever;
       if (lever > 0 && rest > 0) out_.balancing_counterweight = rest / (number * lever);
     }
+    out_.tube_torsion = tube_torsion();
     out_.undeformed = optics_.undeformed();
     out_.beam_rms = total_rms(optics_.beam());
     out_.freedoms = c.body.freedoms();
@@ -94,6 +98,12 @@ class Check {
       const loads::WindAtHeight& wind = winds_.of(kind);
       if (!std::isnan(wind.height)) out_.winds.push_back({kind, wind, on_row_.size_factor(wind)});
     }
+  }
+
+  double tube_torsion() const {
+    const ProfileInput& tube = d_.tube.profile;
+    if (tube.shape == "lattice-box") return lattice_box_torsion(d_, lay_out(d_));
+    return material_of(tube.material, profile_thickness(tube)).G * section_of(tube).J;
   }
 
   // Everything the wind adds to the weight, twist feedback included.

@@ -88,9 +88,10 @@ struct Assessment {
   double weight_torque =
       not_given;  ///< of the weight about the axis with the trough facing the horizon [N m]
   double balancing_counterweight =
-      not_given;                  ///< each, at the present lever, that would balance the row [kg]
-  double undeformed = not_given;  ///< intercept of the perfect trough [-]
-  double beam_rms = not_given;    ///< [rad]
+      not_given;                    ///< each, at the present lever, that would balance the row [kg]
+  double tube_torsion = not_given;  ///< GJ of the torque tube; of a lattice box by its shear flow [N m^2]
+  double undeformed = not_given;    ///< intercept of the perfect trough [-]
+  double beam_rms = not_given;      ///< [rad]
   int freedoms = 0;
 
   Verdict verdict = Verdict::holds_as_far_as_judged;

@@ -16,15 +16,25 @@
 
 namespace focalframe::models {
 
+/// How far a member is held against buckling.
+struct BucklingLength {
+  int member = 0;
+  double about_y = 0, about_z = 0;  ///< buckling lengths for bending about the section's y and z [m]
+  double lateral = 0;  ///< between sideways holds of a plate on edge [m]; 0 = lateral buckling cannot occur
+  std::string shape;   ///< profile word, for the buckling curve
+};
+
 /// One pylon on its footing, world axes with the origin at ground level under the rotation axis.
 struct Stand {
   fem::Frame frame;
-  int head = 0;           ///< node on the rotation axis
-  int foot = 0;           ///< node at ground level
-  double height = 0;      ///< [m]
-  double x = 0;           ///< along the row [m]
-  bool driven = false;    ///< carries the drive and holds the row along x
-  double post_width = 0;  ///< seen by the wind [m]
+  int head = 0;                          ///< node on the rotation axis
+  int foot = 0;                          ///< node at ground level
+  double height = 0;                     ///< [m]
+  double x = 0;                          ///< along the row [m]
+  bool driven = false;                   ///< carries the drive and holds the row along x
+  double post_width = 0;                 ///< seen by the wind [m]
+  double roll = 0;                       ///< of the post's section axes about its own axis [rad]
+  std::vector<BucklingLength> buckling;  ///< of the post
 };
 
 /// Where what turns meets a pylon: the bearing node of the body.
@@ -44,8 +54,9 @@ struct Collector {
   std::vector<Bearing> bearings;  ///< one per pylon, in order along x
   std::vector<Stand> stands;      ///< one per pylon, in order along x
   std::vector<ModulePart> modules;
-  std::vector<int> receiver_nodes;    ///< in order along x; empty without a receiver
-  std::vector<int> receiver_members;  ///< between neighbouring receiver nodes
+  std::vector<int> receiver_nodes;       ///< in order along x; empty without a receiver
+  std::vector<int> receiver_members;     ///< between neighbouring receiver nodes
+  std::vector<BucklingLength> buckling;  ///< of the members that are judged for it
   Skin skin;
   int drive_bearing = 0;       ///< index into bearings
   double drive_stiffness = 0;  ///< [N m/rad]; infinity = rigid

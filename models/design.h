@@ -19,11 +19,19 @@ inline constexpr double not_given = std::numeric_limits<double>::quiet_NaN();
 using Basis = std::string;
 
 /// A profile, by shape word: round-tube (outside-diameter, wall), square-tube (side, wall), rectangular-tube
-/// (depth, width, wall; depth stands upright), round-bar (outside-diameter), flat (depth, thickness).
+/// (depth, width, wall; depth stands upright), round-bar (outside-diameter), flat (depth, thickness), angle
+/// (depth = upright leg, width = the other one, thickness), channel (depth along the web, width of the
+/// flanges, web, flange), properties (depth and the values below).
 struct ProfileInput {
   std::string shape, material;
   double outside_diameter = not_given, side = not_given, depth = not_given, width = not_given;  ///< [m]
-  double wall = not_given, thickness = not_given;                                               ///< [m]
+  double wall = not_given, thickness = not_given, web = not_given, flange = not_given;          ///< [m]
+  double outer_radius = not_given, inner_radius = not_given;  ///< corners of tubes [m]; NaN = EN 10219-2
+  double root_radius = not_given, toe_radius = not_given;     ///< of an angle [m]; NaN = sharp
+  double area = not_given, Iy = not_given, Iz = not_given, J = not_given;  ///< [m^2], [m^4]
+  double shear_area_y = not_given, shear_area_z = not_given;               ///< [m^2]; NaN = rigid
+  double Wy = not_given, Wz = not_given, Wt = not_given;                   ///< [m^3]
+  double turned = 0;  ///< about the member's own axis, from where its depth stands upright [rad]
 };
 
 struct ParabolaInput {
@@ -45,16 +53,26 @@ struct RowInput {
   double end_gap = not_given;  ///< first rib from the pylon centre line [m]; default module length / 50
 };
 
+/// Shape "lattice-box": depth and width between the chords' centre lines; chords, webs and the three words.
 struct TubeInput {
   ProfileInput profile;
+  ProfileInput chords, webs;
+  int panels_per_bay = 1;          ///< lattice panels between two ribs
+  std::string bracing = "zigzag";  ///< one diagonal in every panel of a face | "cross": two
 };
 
+/// Kind "plate": thickness, depths, material; "bent": a bar along the mirror; "truss": depths between the
+/// chords' centre lines, chords, webs, panels.
 struct RibsInput {
   std::string kind = "plate";
   int per_module = 0;  ///< each rib is a pair of arms
   double thickness = not_given, depth_at_tube = not_given, depth_at_tip = not_given;  ///< [m]
+  std::string lower_edge = "follows";  ///< the mirror, with a straight taper | "straight"
   std::string material;
-  int elements = 10;  ///< beam elements along one arm, at least
+  ProfileInput bar, chords, webs;
+  int panels = 0;       ///< of one arm of a truss
+  double hub_mass = 0;  ///< plates and pads where a rib meets the tube, each rib [kg]
+  int elements = 10;    ///< beam elements along one arm, at least
 };
 
 struct PurlinsInput {

@@ -5,6 +5,7 @@
 #include <cstdio>
 
 #include "fem/units.h"
+#include "models/profile.h"
 #include "models/quantity.h"
 
 namespace focalframe::models {
@@ -66,6 +67,27 @@ void judge_strength(const TroughDesign& d, Assessment& a) {
     c.note = use.part + ", 3 s gust, " + spread_text(use.spread) + " pattern";
     a.criteria.push_back(c);
     if (judged && !known) a.not_judged.push_back(group + ": its yield stress is not known");
+  }
+}
+
+void judge_buckling(const TroughDesign& d, Assessment& a) {
+  const bool judged = !d.limits.strength.empty() || !std::isnan(d.limits.strength_factor);
+  for (const auto& [group, use] : a.strength.buckling) {
+    if (use.part.empty()) continue;
+    Criterion c{Question::together,
+                "buckling " + group,
+                group + " buckling",
+                Quantity::ratio,
+                use.used,
+                not_given,
+                false,
+                place_text(use.state),
+                use.part};
+    if (judged) c.limit = 1;
+    c.note = use.part + ", " + quantity_text(use.compression, Quantity::force) + " of " +
+             quantity_text(use.resistance, Quantity::force) + " and its moments, 3 s gust, " +
+             spread_text(use.spread) + " pattern";
+    a.criteria.push_back(c);
   }
 }
 
@@ -179,12 +201,29 @@ void caution(const TroughDesign& d, const Assessment& a, std::vector<std::string
     out.push_back(
         "Dynamic factor 1: gusts are taken to load the row as if at rest; buffeting, galloping and flutter "
         "are screened only by the wind-up speed.");
-  out.push_back("Ribs are taken as braced sideways by " +
-                std::string(d.purlins.count > 0          ? "their purlins"
-                            : d.mirror.sheet_braces_ribs ? "the mirror sheet"
-                                                         : "nothing") +
-                "; lateral buckling of the plate ribs is not judged here (focalframe modes gives the row's "
-                "buckling factors).");
+  out.push_back(
+      "Ribs are taken as braced sideways by " +
+      std::string(d.mirror.sheet_braces_ribs ? "the mirror sheet"
+                  : d.purlins.count > 0      ? "their purlins"
+                                             : "nothing") +
+      "; members are judged one by one by buckling curves with the lengths between what holds them, "
+      "the frame as a whole is not (focalframe modes gives its buckling factors).");
+  const bool lopsided = is_lopsided(d.purlins.profile) || is_lopsided(d.ribs.bar) ||
+                        is_lopsided(d.ribs.chords) || is_lopsided(d.ribs.webs) ||
+                        is_lopsided(d.tube.chords) || is_lopsided(d.tube.webs) ||
+                        is_lopsided(d.receiver.posts.profile) || is_lopsided(d.pylons.profile);
+  if (lopsided)
+    out.push_back(
+        "Angles and channels are loaded and joined at their centroids: the twist from loads beside the shear "
+        "centre and the bending from one-sided end joints are not in here.");
+  if (d.ribs.kind == "truss")
+    out.push_back(
+        "Truss ribs are welded throughout and both chords start on a rigid hub; the hub, its pads "
+        "and all joints are yours to check.");
+  if (d.tube.profile.shape == "lattice-box")
+    out.push_back(
+        "The lattice box has rigid end frames, and a hub at every rib that holds its section in "
+        "shape; both, and all joints, are yours to check.");
   if (d.mirror.kind == "sheet")
     out.push_back(
         "The mirror carries no frame load here; a riveted sheet would stiffen twist and slope, a loose one "
@@ -213,6 +252,7 @@ Answer answer_of(const std::vector<Criterion>& criteria, Question question) {
 void judge(const TroughDesign& design, Assessment& a) {
   judge_focus(design, a);
   judge_strength(design, a);
+  judge_buckling(design, a);
   judge_drive(design, a);
   judge_ground(design, a);
   for (const Criterion& c : a.criteria) {
@@ -231,7 +271,7 @@ void judge(const TroughDesign& design, Assessment& a) {
     if (basis == "guess") ++a.guesses;
   a.not_checked = {"joints, welds, bolts, bearings and mirror pads",
                    "mirror sheet or glass between its supports",
-                   "lateral buckling of ribs, local buckling of thin walls",
+                   "local buckling of thin walls, buckling of the frame as a whole",
                    "fatigue, temperature, snow, ice, earthquake",
                    "wind along the row and oblique wind",
                    "play of the drive and the couplings",

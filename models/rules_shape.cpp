@@ -117,22 +117,8 @@ void check_tube(RuleBook& book) {
         .involves = {"torque-tube/" + size_name};
 }
 
-void check_ribs(RuleBook& book) {
-  const RibsInput& ribs = book.d.ribs;
+void check_purlins(RuleBook& book) {
   const double width = book.d.parabola.aperture;
-  if (ribs.thickness >= ribs.depth_at_tip)
-    book.stop("ribs", "thickness",
-              "A rib is a plate on edge: its thickness must be less than its depth at the tip, here " +
-                  length(ribs.depth_at_tip) + ". Found " + length(ribs.thickness) + ".")
-        .involves = {"ribs/depth-at-tip"};
-  if (ribs.depth_at_tip > ribs.depth_at_tube)
-    book.warn("ribs", "depth-at-tip",
-              "The rib would be deeper at the tip than at the tube (" + length(ribs.depth_at_tube) + ").")
-        .involves = {"ribs/depth-at-tube"};
-  if (ribs.depth_at_tube > 0.5 * width)
-    book.stop("ribs", "depth-at-tube",
-              "The rib would be deeper than half the aperture of " + length(width) + ".")
-        .involves = {"parabola/aperture"};
   const PurlinsInput& purlins = book.d.purlins;
   if (purlins.count % 2 != 0)
     book.stop("purlins", "count",
@@ -222,7 +208,7 @@ void check_shape(RuleBook& book) {
   check_focus(book);
   check_row(book);
   check_tube(book);
-  check_ribs(book);
+  check_purlins(book);
   check_mirror(book);
   check_receiver(book);
   check_plates(book);

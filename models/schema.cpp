@@ -14,8 +14,12 @@ using Table = std::vector<Element>;
 using Q = Quantity;
 
 const std::vector<std::string> all_shapes{"round-tube", "square-tube", "rectangular-tube", "round-bar",
-                                          "flat"};
-const std::vector<std::string> tube_shapes{"round-tube", "square-tube", "rectangular-tube"};
+                                          "flat",       "angle",       "channel",          "properties"};
+const std::vector<std::string> tube_shapes{"round-tube", "square-tube", "rectangular-tube", "lattice-box",
+                                           "properties"};
+// Posts are hinged about a level axis, which must be one of the section's own.
+const std::vector<std::string> post_shapes{"round-tube", "square-tube", "rectangular-tube", "round-bar",
+                                           "flat",       "channel",     "properties"};
 
 // A default is a number people rarely know and that matters little, or the state of a part that is simply not
 // there (no play, no pads); everything that decides a verdict has none.
@@ -85,28 +89,60 @@ void add_structure(Table& table) {
   ElementMaker<TubeInput> tube(
       table, "torque-tube", true, [](TroughDesign& d) -> TubeInput& { return d.tube; },
       "carries the ribs and the twist");
-  tube.profile(&TubeInput::profile, tube_shapes, material_names());
+  tube.profile(&TubeInput::profile, tube_shapes, material_names(), false);
+  tube.add("panels-per-bay", Q::count, &TubeInput::panels_per_bay, "lattice-box: panels between two ribs")
+      .between(1, 20)
+      .preset("1");
+  tube.text("bracing", &TubeInput::bracing, "lattice-box: one diagonal per panel of a face, or two crossed")
+      .words({"zigzag", "cross"})
+      .preset("zigzag");
+  ElementMaker<TubeInput> box_chords(
+      table, "torque-tube/chords", false, [](TroughDesign& d) -> TubeInput& { return d.tube; },
+      "lattice-box: the four bars along the row");
+  box_chords.profile(&TubeInput::chords, all_shapes, material_names());
+  ElementMaker<TubeInput> box_webs(
+      table, "torque-tube/webs", false, [](TroughDesign& d) -> TubeInput& { return d.tube; },
+      "lattice-box: diagonals of its faces and sides of its frames");
+  box_webs.profile(&TubeInput::webs, all_shapes, material_names());
 
   ElementMaker<RibsInput> ribs(
       table, "ribs", true, [](TroughDesign& d) -> RibsInput& { return d.ribs; },
       "arms from the tube to the rims, in pairs");
-  ribs.text("kind", &RibsInput::kind, "plate on edge, tapered").words({"plate"}).preset("plate");
+  ribs.text("kind", &RibsInput::kind, "plate on edge, bar bent along the mirror, or truss")
+      .words({"plate", "bent", "truss"})
+      .preset("plate");
   ribs.add("per-module", Q::count, &RibsInput::per_module, "pairs of arms in one module")
       .required()
       .between(2, 60);
-  ribs.add("thickness", Q::length, &RibsInput::thickness, "of the plate").required().above(0, 0.1);
-  ribs.add("depth-at-tube", Q::length, &RibsInput::depth_at_tube, "depth of the arm at the tube")
-      .required()
+  ribs.add("thickness", Q::length, &RibsInput::thickness, "plate: of the plate").above(0, 0.1);
+  ribs.add("depth-at-tube", Q::length, &RibsInput::depth_at_tube,
+           "plate: depth of the arm at the tube; truss: between the chords' centre lines")
       .above(0, 2);
-  ribs.add("depth-at-tip", Q::length, &RibsInput::depth_at_tip, "depth of the arm at the rim")
-      .required()
-      .above(0, 2);
-  ribs.text("material", &RibsInput::material, "name in the catalogue of materials")
-      .required()
+  ribs.add("depth-at-tip", Q::length, &RibsInput::depth_at_tip, "likewise at the rim").above(0, 2);
+  ribs.text("lower-edge", &RibsInput::lower_edge, "plate and truss: it follows the mirror, or runs straight")
+      .words({"follows", "straight"})
+      .preset("follows");
+  ribs.text("material", &RibsInput::material, "plate: name in the catalogue of materials")
       .words(material_names());
+  ribs.add("panels", Q::count, &RibsInput::panels, "truss: panels of one arm").between(1, 40);
+  ribs.add("hub-mass", Q::mass, &RibsInput::hub_mass, "plates and pads where one rib meets the tube")
+      .between(0, 2000)
+      .preset("0 kg");
   ribs.add("elements", Q::count, &RibsInput::elements, "straight pieces an arm is computed with, at least")
       .between(4, 60)
       .preset("10");
+  ElementMaker<RibsInput> bar(
+      table, "ribs/bar", false, [](TroughDesign& d) -> RibsInput& { return d.ribs; },
+      "bent: the bar along the mirror");
+  bar.profile(&RibsInput::bar, all_shapes, material_names());
+  ElementMaker<RibsInput> chords(
+      table, "ribs/chords", false, [](TroughDesign& d) -> RibsInput& { return d.ribs; },
+      "truss: upper and lower chord");
+  chords.profile(&RibsInput::chords, all_shapes, material_names());
+  ElementMaker<RibsInput> webs(
+      table, "ribs/webs", false, [](TroughDesign& d) -> RibsInput& { return d.ribs; },
+      "truss: posts and diagonals");
+  webs.profile(&RibsInput::webs, all_shapes, material_names());
 
   ElementMaker<PurlinsInput> purlins(
       table, "purlins", false, [](TroughDesign& d) -> PurlinsInput& { return d.purlins; },
@@ -193,7 +229,7 @@ void add_carried(Table& table) {
       table, "receiver/posts", true, [](TroughDesign& d) -> PostsInput& { return d.receiver.posts; },
       "hold the receiver, hinged along the row");
   posts.add("per-module", Q::count, &PostsInput::per_module, "posts in one module").required().between(1, 60);
-  posts.profile(&PostsInput::profile, all_shapes, material_names());
+  posts.profile(&PostsInput::profile, post_shapes, material_names());
   posts.text("stand-on", &PostsInput::stand_on, "what the posts stand on").words({"tube"}).preset("tube");
 
   ElementMaker<CounterweightsInput> weights(

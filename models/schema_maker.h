@@ -2,8 +2,10 @@
 
 /// Short notation for the table in models/schema.cpp; nothing else uses it.
 
+#include <algorithm>
 #include <functional>
 #include <string>
+#include <tuple>
 #include <utility>
 #include <vector>
 
@@ -64,7 +66,7 @@ class ElementMaker {
 
   /// The attributes of a profile: shape, its sizes, material.
   void profile(ProfileInput Part::*member, const std::vector<std::string>& shapes,
-               const std::vector<std::string>& material_names);
+               const std::vector<std::string>& material_names, bool material_needed = true);
 
   FieldMaker add_slot(std::string name, Quantity quantity, std::function<Slot(TroughDesign&)> slot,
                       std::string help) {
@@ -85,32 +87,64 @@ class ElementMaker {
 
 template <class Part>
 void ElementMaker<Part>::profile(ProfileInput Part::*member, const std::vector<std::string>& shapes,
-                                 const std::vector<std::string>& material_names) {
+                                 const std::vector<std::string>& material_names, bool material_needed) {
   const auto part = part_;
-  const auto size = [&](const char* name, double ProfileInput::*value, std::string help) {
-    add_slot(
-        name, Quantity::length,
-        [part, member, value](TroughDesign& d) -> Slot { return &((part(d).*member).*value); },
-        std::move(help))
-        .above(0, 3);
+  const auto value = [&](const char* name, Quantity quantity, double ProfileInput::*size, std::string help) {
+    return add_slot(
+        name, quantity, [part, member, size](TroughDesign& d) -> Slot { return &((part(d).*member).*size); },
+        std::move(help));
   };
-  add_slot(
-      "shape", Quantity::none, [part, member](TroughDesign& d) -> Slot { return &(part(d).*member).shape; },
-      "shape of the section")
-      .required()
-      .words(shapes);
-  size("outside-diameter", &ProfileInput::outside_diameter, "round-tube and round-bar: as sold, outside");
-  size("side", &ProfileInput::side, "square-tube: outside");
-  size("depth", &ProfileInput::depth, "rectangular-tube and flat: upright size");
-  size("width", &ProfileInput::width, "rectangular-tube: level size");
-  size("wall", &ProfileInput::wall, "tubes: wall thickness");
-  size("thickness", &ProfileInput::thickness, "flat: thickness");
-  add_slot(
-      "material", Quantity::none,
-      [part, member](TroughDesign& d) -> Slot { return &(part(d).*member).material; },
-      "name in the catalogue of materials")
-      .required()
-      .words(material_names);
+  const auto text = [&](const char* name, std::string ProfileInput::*word, std::string help) {
+    return add_slot(
+        name, Quantity::none,
+        [part, member, word](TroughDesign& d) -> Slot { return &((part(d).*member).*word); },
+        std::move(help));
+  };
+  const auto has = [&](const char* shape) {
+    return std::find(shapes.begin(), shapes.end(), shape) != shapes.end();
+  };
+  using P = ProfileInput;
+  text("shape", &P::shape, "shape of the section").required().words(shapes);
+  for (const auto& [name, size, help] :
+       {std::tuple{"outside-diameter", &P::outside_diameter, "round-tube and round-bar: as sold, outside"},
+        std::tuple{"side", &P::side, "square-tube: outside"},
+        std::tuple{"depth", &P::depth, "upright size; angle: upright leg; channel: along its web"},
+        std::tuple{"width", &P::width, "level size; angle: other leg; channel: its flanges"},
+        std::tuple{"wall", &P::wall, "tubes: wall thickness"}})
+    value(name, Quantity::length, size, help).above(0, 3);
+  value("thickness", Quantity::length, &P::thickness, "flat, angle; properties: for the yield stress")
+      .above(0, 3);
+  if (has("channel")) {
+    value("web", Quantity::length, &P::web, "channel: thickness of its web").above(0, 0.1);
+    value("flange", Quantity::length, &P::flange, "channel: thickness of its flanges").above(0, 0.1);
+  }
+  if (has("angle")) {
+    value("root-radius", Quantity::length, &P::root_radius, "angle: between the legs; sharp when left out")
+        .above(0, 0.1);
+    value("toe-radius", Quantity::length, &P::toe_radius, "angle: at the legs' tips; sharp when left out")
+        .above(0, 0.1);
+    value("turned", Quantity::angle, &P::turned,
+          "about the member's axis, from where its depth stands upright")
+        .between(-3.1416 * 2, 3.1416 * 2)
+        .preset("0 deg");
+  }
+  const char* const corners = "tube with corners; cold-formed rule of EN 10219-2 when left out";
+  value("outer-radius", Quantity::length, &P::outer_radius, corners).above(0, 0.2);
+  value("inner-radius", Quantity::length, &P::inner_radius, corners).above(0, 0.2);
+  value("area", Quantity::area, &P::area, "properties").above(0, 1);
+  value("Iy", Quantity::area_moment, &P::Iy, "properties: bending that moves it along its depth").above(0, 1);
+  value("Iz", Quantity::area_moment, &P::Iz, "properties: bending sideways").above(0, 1);
+  value("J", Quantity::area_moment, &P::J, "properties: torsion constant").above(0, 1);
+  value("shear-area-y", Quantity::area, &P::shear_area_y, "properties: rigid in shear when left out")
+      .above(0, 1);
+  value("shear-area-z", Quantity::area, &P::shear_area_z, "properties: rigid in shear when left out")
+      .above(0, 1);
+  value("Wy", Quantity::section_modulus, &P::Wy, "properties: for stresses").above(0, 1);
+  value("Wz", Quantity::section_modulus, &P::Wz, "properties: for stresses").above(0, 1);
+  value("Wt", Quantity::section_modulus, &P::Wt, "properties: for stresses from torsion").above(0, 1);
+  FieldMaker material = text("material", &P::material, "name in the catalogue of materials");
+  material.words(material_names);
+  if (material_needed) material.required();
 }
 
 }  // namespace focalframe::models

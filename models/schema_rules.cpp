@@ -2,6 +2,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <stdexcept>
+
+#include "models/profile.h"
 
 namespace focalframe::models {
 namespace {
@@ -78,15 +81,47 @@ constexpr Size sizes[] = {{"outside-diameter", &ProfileInput::outside_diameter},
                           {"depth", &ProfileInput::depth},
                           {"width", &ProfileInput::width},
                           {"wall", &ProfileInput::wall},
-                          {"thickness", &ProfileInput::thickness}};
+                          {"thickness", &ProfileInput::thickness},
+                          {"web", &ProfileInput::web},
+                          {"flange", &ProfileInput::flange},
+                          {"root-radius", &ProfileInput::root_radius},
+                          {"toe-radius", &ProfileInput::toe_radius},
+                          {"outer-radius", &ProfileInput::outer_radius},
+                          {"inner-radius", &ProfileInput::inner_radius},
+                          {"area", &ProfileInput::area},
+                          {"Iy", &ProfileInput::Iy},
+                          {"Iz", &ProfileInput::Iz},
+                          {"J", &ProfileInput::J},
+                          {"Wy", &ProfileInput::Wy},
+                          {"Wz", &ProfileInput::Wz},
+                          {"Wt", &ProfileInput::Wt},
+                          {"shear-area-y", &ProfileInput::shear_area_y},
+                          {"shear-area-z", &ProfileInput::shear_area_z}};
 
-std::vector<std::string> sizes_of(const std::string& shape) {
-  if (shape == "round-tube") return {"outside-diameter", "wall"};
-  if (shape == "square-tube") return {"side", "wall"};
-  if (shape == "rectangular-tube") return {"depth", "width", "wall"};
-  if (shape == "round-bar") return {"outside-diameter"};
-  if (shape == "flat") return {"depth", "thickness"};
-  return {};
+using Words = std::vector<std::string>;
+struct ShapeSizes {
+  const char* shape;
+  Words needs, may;
+};
+const ShapeSizes* sizes_of(const std::string& shape) {
+  static const std::vector<ShapeSizes> all{
+      {"round-tube", {"outside-diameter", "wall"}, {}},
+      {"square-tube", {"side", "wall"}, {"outer-radius", "inner-radius"}},
+      {"rectangular-tube", {"depth", "width", "wall"}, {"outer-radius", "inner-radius"}},
+      {"round-bar", {"outside-diameter"}, {}},
+      {"flat", {"depth", "thickness"}, {}},
+      {"angle", {"depth", "width", "thickness"}, {"root-radius", "toe-radius"}},
+      {"channel", {"depth", "width", "web", "flange"}, {}},
+      {"properties",
+       {"depth", "area", "Iy", "Iz", "J", "Wy", "Wz", "Wt"},
+       {"thickness", "shear-area-y", "shear-area-z"}},
+      {"lattice-box", {"depth", "width"}, {}}};
+  const auto at = std::find_if(all.begin(), all.end(), [&](const ShapeSizes& s) { return s.shape == shape; });
+  return at == all.end() ? nullptr : &*at;
+}
+
+bool listed(const Words& words, const std::string& word) {
+  return std::find(words.begin(), words.end(), word) != words.end();
 }
 
 void check_wall(RuleBook& book, const std::string& path, const ProfileInput& p) {
@@ -120,19 +155,27 @@ void check_wall(RuleBook& book, const std::string& path, const ProfileInput& p) 
         .involves = involved;
 }
 
+bool book_has_stop(const RuleBook& book, const std::string& path) {
+  return std::any_of(book.violations.begin(), book.violations.end(), [&](const Violation& v) {
+    return v.level == Violation::Level::stop && v.element == path;
+  });
+}
+
 void check_profile(RuleBook& book, const std::string& path, const ProfileInput& p) {
-  const std::vector<std::string> wanted = sizes_of(p.shape);
-  if (wanted.empty()) return;
+  const ShapeSizes* wanted = sizes_of(p.shape);
+  if (!wanted) return;
+  bool complete = true;
   for (const Size& size : sizes) {
-    const bool needed = std::find(wanted.begin(), wanted.end(), size.name) != wanted.end();
+    const bool needed = listed(wanted->needs, size.name), may = needed || listed(wanted->may, size.name);
     const bool given = !std::isnan(p.*size.value);
+    complete = complete && (!needed || given) && (!given || may);
     if (needed && !given)
       book.missing(path, size.name,
-                   "A " + p.shape + " needs " + list(wanted) + "; \"" + size.name + "\" is missing.")
+                   "A " + p.shape + " needs " + list(wanted->needs) + "; \"" + size.name + "\" is missing.")
           .involves = {path + "/shape"};
-    if (!needed && given)
+    if (!may && given)
       book.stop(path, size.name,
-                "A " + p.shape + " has no \"" + size.name + "\". It needs " + list(wanted) + ".")
+                "A " + p.shape + " has no \"" + size.name + "\". It needs " + list(wanted->needs) + ".")
           .involves = {path + "/shape"};
   }
   if (p.shape.ends_with("tube")) check_wall(book, path, p);
@@ -140,6 +183,12 @@ void check_profile(RuleBook& book, const std::string& path, const ProfileInput& 
     book.stop(path, "thickness",
               "A flat is thinner than it is deep, here " + quantity_text(p.depth, Quantity::length) + ".")
         .involves = {path + "/depth"};
+  if (p.shape == "lattice-box" || !complete || book_has_stop(book, path)) return;
+  try {
+    section_of(p);
+  } catch (const std::invalid_argument& error) {
+    book.stop(path, "shape", std::string("These sizes do not make a section: ") + error.what() + ".");
+  }
 }
 
 }  // namespace
@@ -177,6 +226,11 @@ void check_fields(RuleBook& book) {
 
 void check_profiles(RuleBook& book) {
   check_profile(book, "torque-tube", book.d.tube.profile);
+  check_profile(book, "torque-tube/chords", book.d.tube.chords);
+  check_profile(book, "torque-tube/webs", book.d.tube.webs);
+  check_profile(book, "ribs/bar", book.d.ribs.bar);
+  check_profile(book, "ribs/chords", book.d.ribs.chords);
+  check_profile(book, "ribs/webs", book.d.ribs.webs);
   if (book.d.purlins.count > 0) check_profile(book, "purlins", book.d.purlins.profile);
   check_profile(book, "receiver/posts", book.d.receiver.posts.profile);
   check_profile(book, "pylons", book.d.pylons.profile);
@@ -190,6 +244,7 @@ std::vector<Violation> validate(const TroughDesign& design) {
   check_ground(book);
   check_weather(book);
   check_optics(book);
+  check_parts(book);
   return std::move(book.violations);
 }
 

@@ -42,7 +42,8 @@ class RuleBook {
 
 void check_fields(RuleBook& book);    ///< required ones, words, ranges
 void check_profiles(RuleBook& book);  ///< sizes a shape needs, walls
-void check_shape(RuleBook& book);     ///< parabola, row, tube, ribs, purlins, mirror, receiver
+void check_shape(RuleBook& book);     ///< parabola, row, tube, purlins, mirror, receiver
+void check_parts(RuleBook& book);     ///< what each kind of rib and torque tube needs and has not
 void check_ground(RuleBook& book);    ///< pylons, drive, poses
 void check_weather(RuleBook& book);   ///< site, winds, anemometer, year
 void check_optics(RuleBook& book);    ///< optics, limits, accepted exceptions

@@ -84,6 +84,12 @@ StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site) {
 StrengthCheck::StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {
   for (const fem::Member& member : row.collector().body.members)
     of_member_.push_back(&result_.groups[member.group]);
+  const Collector& c = row.collector();
+  columns_ = buckling_resistances(c.body, c.buckling, rule_.on_yield);
+  for (const MemberResistance& r : columns_)
+    of_column_.push_back(&result_.buckling[c.body.members[static_cast<std::size_t>(r.member)].group]);
+  for (const Stand& stand : c.stands)
+    stand_columns_.push_back(buckling_resistances(stand.frame, stand.buckling, rule_.on_yield));
 }
 
 const std::vector<ActionFactors>& StrengthCheck::factors(StateKind kind) const {
@@ -112,6 +118,15 @@ void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
   worst = {stress, allowed, used, member.name, loads.state, loads.spread[static_cast<std::size_t>(variant)]};
 }
 
+void StrengthCheck::judge_buckling(const MemberResistance& resistance, const fem::Member& member,
+                                   const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads,
+                                   int variant, BucklingUse& worst) const {
+  const BucklingShare share = buckling_share(resistance, ends);
+  if (!worst.part.empty() && share.used <= worst.used) return;
+  worst = {share.used,  share.compression, resistance.N,
+           member.name, loads.state,       loads.spread[static_cast<std::size_t>(variant)]};
+}
+
 void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLoads>& states) {
   // One product for everything this pose is asked: weight, then every wind of every state.
   int columns = 1;
@@ -129,12 +144,21 @@ void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLo
   at = 1;
   for (const StateLoads& loads : states)
     for (int v = 0; v < loads.wind.cols(); ++v, ++at)
-      for (std::size_t m = 0; m < frame.members.size(); ++m)
-        for (const ActionFactors& f : factors(loads.state.kind)) {
+      for (const ActionFactors& f : factors(loads.state.kind)) {
+        const auto take = [&](std::size_t m) {
           const int first = 12 * static_cast<int>(m);
           ends = f.permanent * forces.block<12, 1>(first, 0) + f.wind * forces.block<12, 1>(first, at);
+        };
+        for (std::size_t m = 0; m < frame.members.size(); ++m) {
+          take(m);
           judge(frame.members[m], frame, ends, loads, v, *of_member_[m]);
         }
+        for (std::size_t c = 0; c < columns_.size(); ++c) {
+          const std::size_t m = static_cast<std::size_t>(columns_[c].member);
+          take(m);
+          judge_buckling(columns_[c], frame.members[m], ends, loads, v, *of_column_[c]);
+        }
+      }
 }
 
 void StrengthCheck::add_drive(const PoseModel& pose, const StateLoads& loads) {
@@ -166,10 +190,17 @@ void StrengthCheck::add_stands(const PoseModel& pose, const StateLoads& loads) {
         const VectorXd ends = f.permanent * weight + f.wind * gathered * wind.col(v);
         judge(stand.frame.members[0], stand.frame, ends, loads, v,
               result_.groups[stand.frame.members[0].group]);
+        for (const MemberResistance& r : stand_columns_[k])
+          judge_buckling(r, stand.frame.members[0], ends, loads, v,
+                         result_.buckling[stand.frame.members[0].group]);
       }
       const VectorXd plain = weight + gathered * wind.col(v);
-      // Post axes x, y, z are world Z, X, Y.
-      FootReaction foot{{plain[1], plain[2], plain[0], plain[4], plain[5], plain[3]}, number, loads.state};
+      // Post axes x, y, z are world Z, X, Y once the section's roll is taken back.
+      const double c = std::cos(stand.roll), s = std::sin(stand.roll);
+      FootReaction foot{{c * plain[1] - s * plain[2], s * plain[1] + c * plain[2], plain[0],
+                         c * plain[4] - s * plain[5], s * plain[4] + c * plain[5], plain[3]},
+                        number,
+                        loads.state};
       for (std::size_t i = 0; i < 6; ++i) {
         if (foot.value[i] > result_.greatest[i].value[i]) result_.greatest[i] = foot;
         if (foot.value[i] < result_.least[i].value[i]) result_.least[i] = foot;

@@ -8,6 +8,7 @@
 #include <string>
 #include <vector>
 
+#include "models/member_buckling.h"
 #include "models/row_model.h"
 #include "models/states.h"
 #include "models/wind_load.h"
@@ -40,6 +41,16 @@ struct StressUse {
   Spread spread = Spread::linear;
 };
 
+/// Worst buckling of one member group, see models/member_buckling.h.
+struct BucklingUse {
+  double used = 0;         ///< 1 = at the limit
+  double compression = 0;  ///< axial force in that member [N]
+  double resistance = 0;   ///< chi A f of it [N]
+  std::string part;
+  State state;
+  Spread spread = Spread::linear;
+};
+
 struct TorqueUse {
   double torque =
       0;  ///< what the drive must bring about the rotation axis, unfactored, sign as the body feels it [N m]
@@ -55,8 +66,9 @@ struct FootReaction {
 };
 
 struct StrengthResult {
-  std::map<std::string, StressUse> groups;  ///< worst of each member group, "pylon" included
-  TorqueUse moving, holding;                ///< worst of OPERATE and TURNING; worst of all states
+  std::map<std::string, StressUse> groups;      ///< worst of each member group, "pylon" included
+  std::map<std::string, BucklingUse> buckling;  ///< worst of each group that can buckle
+  TorqueUse moving, holding;                    ///< worst of OPERATE and TURNING; worst of all states
   std::map<double, double>
       moving_torque;  ///< greatest |torque| at each elevation of OPERATE and TURNING [rad -> N m]
   std::array<FootReaction, 6> greatest, least;  ///< per component, unfactored
@@ -91,11 +103,17 @@ class StrengthCheck {
   void judge(const fem::Member& member, const fem::Frame& frame,
              const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant,
              StressUse& worst) const;
+  void judge_buckling(const MemberResistance& resistance, const fem::Member& member,
+                      const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant,
+                      BucklingUse& worst) const;
 
   const RowModel& row_;
   StrengthRule rule_;
   StrengthResult result_;
   std::vector<StressUse*> of_member_;  ///< every member's group in result_
+  std::vector<MemberResistance> columns_;
+  std::vector<BucklingUse*> of_column_;                       ///< likewise, per column
+  std::vector<std::vector<MemberResistance>> stand_columns_;  ///< per stand
 };
 
 }  // namespace focalframe::models

@@ -5,8 +5,11 @@
 #include <numbers>
 #include <stdexcept>
 
+#include "models/body_maker.h"
 #include "models/catalogue.h"
 #include "models/profile.h"
+#include "models/rib_arms.h"
+#include "models/torque_box.h"
 #include "models/trough_ribs.h"
 
 namespace focalframe::models {
@@ -24,13 +27,10 @@ double arc_to(double y, double focal_length) {
   return focal_length * (t * std::sqrt(1 + t * t) + std::asinh(t));
 }
 
-std::string place(const std::string& what, int number, int module) {
-  return what + " " + std::to_string(number + 1) + " of module " + std::to_string(module + 1);
-}
-
 class TroughBuilder {
  public:
-  TroughBuilder(const TroughDesign& design, TroughLayout layout) : d_(design), at_(std::move(layout)) {}
+  TroughBuilder(const TroughDesign& design, TroughLayout layout)
+      : d_(design), at_(std::move(layout)), rib_arms_(d_, at_, make_) {}
 
   Collector build() {
     out_.width = at_.width;
@@ -47,69 +47,19 @@ class TroughBuilder {
     double length = 0;
     for (double w : out_.skin.station_weight) length += w;
     out_.mirror_area = length * at_.width;
-    return std::move(out_);
+    return std::move(make_.out);
   }
 
  private:
-  int material(const std::string& name, double thickness) {
-    const std::string key = name + "@" + std::to_string(thickness);
-    for (std::size_t i = 0; i < material_keys_.size(); ++i)
-      if (material_keys_[i] == key) return static_cast<int>(i);
-    out_.body.materials.push_back(material_of(name, thickness));
-    material_keys_.push_back(key);
-    return static_cast<int>(material_keys_.size()) - 1;
-  }
-
-  int section(fem::Section s) {
-    out_.body.sections.push_back(std::move(s));
-    return static_cast<int>(out_.body.sections.size()) - 1;
-  }
-
-  static double plate_thickness(const ProfileInput& p) { return std::isnan(p.wall) ? p.thickness : p.wall; }
-
   void add_sections() {
-    tube_section_ = section(section_of(d_.tube.profile));
-    tube_material_ = material(d_.tube.profile.material, plate_thickness(d_.tube.profile));
-    rib_material_ = material(d_.ribs.material, d_.ribs.thickness);
-    for (std::size_t e = 0; e + 1 < at_.arm_y.size(); ++e) {
-      const double depth = rib_depth(d_, at_, (at_.arm_y[e] + at_.arm_y[e + 1]) / 2);
-      rib_sections_.push_back(section(fem::flat({.depth_z = depth, .thickness_y = d_.ribs.thickness})));
+    if (d_.tube.profile.shape != "lattice-box") {
+      tube_section_ = make_.section(section_of(d_.tube.profile));
+      tube_material_ = make_.material(d_.tube.profile);
     }
     if (d_.purlins.count > 0) {
-      purlin_section_ = section(section_of(d_.purlins.profile));
-      purlin_material_ = material(d_.purlins.profile.material, plate_thickness(d_.purlins.profile));
+      purlin_section_ = make_.section(section_of(d_.purlins.profile));
+      purlin_material_ = make_.material(d_.purlins.profile);
     }
-  }
-
-  int node(const Vec3& at, const std::string& name) {
-    out_.body.nodes.push_back({at, name});
-    return static_cast<int>(out_.body.nodes.size()) - 1;
-  }
-
-  fem::Member& member(int from, int to, int sec, int mat, const Vec3& up, const std::string& name,
-                      const std::string& group) {
-    fem::Member m;
-    m.from = from;
-    m.to = to;
-    m.section = sec;
-    m.material = mat;
-    m.up = up;
-    m.name = name;
-    m.group = group;
-    out_.body.members.push_back(m);
-    return out_.body.members.back();
-  }
-
-  void point_mass(int at, double mass, const Vec3& offset, const std::string& name,
-                  const std::string& group) {
-    if (mass <= 0) return;
-    fem::PointMass p;
-    p.node = at;
-    p.mass = mass;
-    p.offset = offset;
-    p.name = name;
-    p.group = group;
-    out_.body.masses.push_back(p);
   }
 
   // Torque tube with its rib stations and post stations; its ends lie on the rotation axis.
@@ -117,6 +67,26 @@ class TroughBuilder {
     ModulePart part;
     part.x_from = m * at_.module_length;
     part.x_to = part.x_from + at_.module_length;
+    const std::string number = std::to_string(m + 1);
+    const int start = make_.node({part.x_from, 0, -at_.axis_to_vertex}, "start of module " + number);
+    starts_.push_back(start);
+    const Vec3 to_tube(0, 0, at_.axis_to_vertex - at_.tube_to_vertex);
+    if (d_.tube.profile.shape == "lattice-box") {
+      ends_.push_back(make_.node({part.x_to, 0, -at_.axis_to_vertex}, "end of module " + number));
+      part.tube_nodes = add_torque_box(d_, at_, make_, m, start, ends_.back(), to_tube);
+    } else {
+      ends_.push_back(add_tube(part, m, start, to_tube));
+    }
+    for (double x : at_.rib_x) part.rib_roots.push_back(tube_node_at(part, part.x_from + x));
+    out_.modules.push_back(part);
+    for (std::size_t r = 0; r < at_.rib_x.size(); ++r)
+      ribs_.push_back(rib_arms_.add(m, static_cast<int>(r), part.x_from + at_.rib_x[r], part.rib_roots[r]));
+    if (d_.purlins.count > 0) add_purlins(m);
+    add_module_masses(m);
+  }
+
+  // Returns the tube's last node, on the rotation axis at the module's end.
+  int add_tube(ModulePart& part, int m, int start, const Vec3& to_tube) {
     std::vector<double> stops = at_.rib_x;
     stops.insert(stops.end(), at_.post_x.begin(), at_.post_x.end());
     std::sort(stops.begin(), stops.end());
@@ -124,72 +94,32 @@ class TroughBuilder {
     stops.erase(std::unique(stops.begin(), stops.end(), same), stops.end());
 
     const double z = -at_.tube_to_vertex;
-    const Vec3 to_tube(0, 0, at_.axis_to_vertex - at_.tube_to_vertex);
-    int last = node({part.x_from, 0, -at_.axis_to_vertex}, "start of module " + std::to_string(m + 1));
-    starts_.push_back(last);
+    const ProfileInput& profile = d_.tube.profile;
+    const std::string number = std::to_string(m + 1);
+    int last = start;
     Vec3 arm = to_tube;
     for (std::size_t i = 0; i <= stops.size(); ++i) {
       const bool end = i == stops.size();
-      const int next =
-          end ? node({part.x_to, 0, -at_.axis_to_vertex}, "end of module " + std::to_string(m + 1))
-              : node({part.x_from + stops[i], 0, z}, "tube of module " + std::to_string(m + 1) + " at " +
-                                                         std::to_string(std::lround(stops[i] * 1000)) +
-                                                         " mm");
-      fem::Member& tube = member(last, next, tube_section_, tube_material_, Vec3::UnitZ(),
-                                 place("tube bay", static_cast<int>(i), m), "torque tube");
+      const int next = end ? make_.node({part.x_to, 0, -at_.axis_to_vertex}, "end of module " + number)
+                           : make_.node({part.x_from + stops[i], 0, z},
+                                        "tube of module " + number + " at " +
+                                            std::to_string(std::lround(stops[i] * 1000)) + " mm");
+      fem::Member& tube = make_.member(last, next, tube_section_, tube_material_,
+                                       rolled_up(profile, Vec3::UnitX(), Vec3::UnitZ()),
+                                       place_name("tube bay", static_cast<int>(i), m), "torque tube");
       tube.offset_from = arm;
       if (end) tube.offset_to = to_tube;
       arm = Vec3::Zero();
       if (!end) part.tube_nodes.push_back(next);
       last = next;
     }
-    ends_.push_back(last);
-    for (double x : at_.rib_x) part.rib_roots.push_back(tube_node_at(part, part.x_from + x));
-    out_.modules.push_back(part);
-    for (std::size_t r = 0; r < at_.rib_x.size(); ++r) add_rib(m, static_cast<int>(r));
-    if (d_.purlins.count > 0) add_purlins(m);
-    add_module_masses(m);
+    return last;
   }
 
   int tube_node_at(const ModulePart& part, double x) const {
     for (int n : part.tube_nodes)
       if (std::abs(out_.body.nodes[static_cast<std::size_t>(n)].at.x() - x) < 1e-6) return n;
     throw std::logic_error("no tube node where a rib or post stands");
-  }
-
-  // The rib's own axis runs half its depth below its upper edge, which lies `standoff` below the mirror
-  // surface.
-  Vec3 rib_axis(double x, double y) const {
-    const Vec3 normal = area_normal(y, at_.focal_length).normalized();
-    return surface_point(x, y, at_.focal_length) - normal * (at_.standoff + rib_depth(d_, at_, y) / 2);
-  }
-
-  void add_rib(int m, int r) {
-    RibPart rib;
-    rib.module = m;
-    rib.x = out_.modules.back().x_from + at_.rib_x[static_cast<std::size_t>(r)];
-    rib.tube_node = out_.modules.back().rib_roots[static_cast<std::size_t>(r)];
-    for (std::size_t side = 0; side < 2; ++side) {
-      const double sign = side == 0 ? -1 : 1;
-      const std::string name = place("rib", r, m) + (side == 0 ? ", -Y side" : ", +Y side");
-      int last = rib.tube_node;
-      Vec3 arm = rib_axis(rib.x, sign * at_.arm_y[0]) - out_.body.nodes[static_cast<std::size_t>(last)].at;
-      for (std::size_t e = 0; e + 1 < at_.arm_y.size(); ++e) {
-        const double y0 = sign * at_.arm_y[e], y1 = sign * at_.arm_y[e + 1];
-        const bool tip = e + 2 == at_.arm_y.size();
-        const int next =
-            node(rib_axis(rib.x, y1), name + (tip ? ", tip" : ", part " + std::to_string(e + 1)));
-        fem::Member& beam =
-            member(last, next, rib_sections_[e], rib_material_, area_normal((y0 + y1) / 2, at_.focal_length),
-                   name + ", part " + std::to_string(e + 1), e == 0 ? "rib root" : "rib");
-        beam.offset_from = arm;
-        arm = Vec3::Zero();
-        rib.members[side].push_back(static_cast<int>(out_.body.members.size()) - 1);
-        rib.nodes[side].push_back(next);
-        last = next;
-      }
-    }
-    ribs_.push_back(rib);
   }
 
   void add_purlins(int m) {
@@ -201,14 +131,16 @@ class TroughBuilder {
           const std::size_t at = static_cast<std::size_t>(at_.purlin_at[k]);
           const double y = (side == 0 ? -1 : 1) * at_.arm_y[at];
           const Vec3 normal = area_normal(y, at_.focal_length).normalized();
-          fem::Member& purlin = member(
-              ribs_[r].nodes[side][at - 1], ribs_[r + 1].nodes[side][at - 1], purlin_section_,
-              purlin_material_, normal,
-              place("purlin", static_cast<int>(k), m) + (side == 0 ? ", -Y side" : ", +Y side"), "purlin");
+          const int from = ribs_[r].nodes[side][at - 1], to = ribs_[r + 1].nodes[side][at - 1];
+          fem::Member& purlin = make_.member(
+              from, to, purlin_section_, purlin_material_,
+              rolled_up(d_.purlins.profile, make_.at(to) - make_.at(from), normal),
+              place_name("purlin", static_cast<int>(k), m) + (side == 0 ? ", -Y side" : ", +Y side"),
+              "purlin");
           // On top of the ribs when it carries the mirror, else let into them at mid-depth.
           if (carries_mirror)
             purlin.offset_from = purlin.offset_to =
-                normal * (rib_depth(d_, at_, y) + profile_depth(d_.purlins.profile)) / 2;
+                normal * (rib_seat(d_, at_, y) + profile_seat(d_.purlins.profile));
         }
   }
 
@@ -229,8 +161,8 @@ class TroughBuilder {
       const auto hang = [&](int at, double y_a, double y_b) {
         const double arc = arc_to(y_b, at_.focal_length) - arc_to(y_a, at_.focal_length);
         const Vec3 spot = surface_point(rib.x + (right - left) / 2, (y_a + y_b) / 2, at_.focal_length);
-        point_mass(at, per_area * arc * (left + right),
-                   spot - out_.body.nodes[static_cast<std::size_t>(at)].at, "mirror", "mirror");
+        make_.point_mass(at, per_area * arc * (left + right),
+                         spot - out_.body.nodes[static_cast<std::size_t>(at)].at, "mirror", "mirror");
       };
       const double inner = (at_.arm_y[0] + at_.arm_y[1]) / 2;
       hang(rib.tube_node, -inner, inner);
@@ -244,13 +176,14 @@ class TroughBuilder {
     for (int i = 0; i < d_.counterweights.per_module; ++i) {
       const std::size_t rib = static_cast<std::size_t>((2 * i + 1) * static_cast<int>(per_module) /
                                                        (2 * d_.counterweights.per_module));
-      point_mass(out_.modules.back().rib_roots[std::min(rib, per_module - 1)], d_.counterweights.mass,
-                 {0, 0, -d_.counterweights.behind_tube}, place("counterweight", i, m), "counterweight");
+      make_.point_mass(out_.modules.back().rib_roots[std::min(rib, per_module - 1)], d_.counterweights.mass,
+                       {0, 0, -d_.counterweights.behind_tube}, place_name("counterweight", i, m),
+                       "counterweight");
     }
     const double plate = end_plate_mass();
     const Vec3 half(0, 0, (at_.axis_to_vertex - at_.tube_to_vertex) / 2);
-    point_mass(starts_.back(), plate, half, "end plate", "end plate");
-    point_mass(ends_.back(), plate, half, "end plate", "end plate");
+    make_.point_mass(starts_.back(), plate, half, "end plate", "end plate");
+    make_.point_mass(ends_.back(), plate, half, "end plate", "end plate");
   }
 
   double end_plate_mass() const {
@@ -303,20 +236,18 @@ class TroughBuilder {
       const double area = pi / 4 * (r.sleeve.outside_diameter * r.sleeve.outside_diameter - inner * inner);
       per_length += area * material_of(r.sleeve.material, r.sleeve.wall).density;
     }
-    const int steel = material(r.material, r.wall);
+    const int steel = make_.material(r.material, r.wall);
     fem::Material filled = out_.body.materials[static_cast<std::size_t>(steel)];
     filled.density += per_length / tube.A;
-    out_.body.materials.push_back(filled);
-    material_keys_.push_back("receiver with content");
-    return static_cast<int>(material_keys_.size()) - 1;
+    return make_.add_material(filled, "receiver with content");
   }
 
   void add_receiver() {
     const ReceiverInput& r = d_.receiver;
     const fem::Section tube = fem::round_tube({.outside_diameter = r.outside_diameter, .wall = r.wall});
-    const int mat = receiver_material(tube), sec = section(tube);
-    const int post_sec = section(section_of(r.posts.profile));
-    const int post_mat = material(r.posts.profile.material, plate_thickness(r.posts.profile));
+    const int mat = receiver_material(tube), sec = make_.section(tube);
+    const int post_sec = make_.section(section_of(r.posts.profile));
+    const int post_mat = make_.material(r.posts.profile);
     out_.receiver_radius = r.outside_diameter / 2;
     out_.receiver_drag_width =
         std::isnan(r.sleeve.outside_diameter) ? r.outside_diameter : r.sleeve.outside_diameter;
@@ -324,10 +255,10 @@ class TroughBuilder {
     const double drive_x = at_.drive_pylon * at_.module_length;
     double nearest = 1e300;
     std::pair<int, int> bracket{-1, -1};
-    int last = node({0, 0, at_.focal_length}, "receiver, first end");
+    int last = make_.node({0, 0, at_.focal_length}, "receiver, first end");
     out_.receiver_nodes.push_back(last);
     const auto run_to = [&](int next) {
-      member(last, next, sec, mat, Vec3::UnitZ(), "receiver", "receiver");
+      make_.member(last, next, sec, mat, Vec3::UnitZ(), "receiver", "receiver");
       out_.receiver_members.push_back(static_cast<int>(out_.body.members.size()) - 1);
       out_.receiver_nodes.push_back(next);
       last = next;
@@ -335,20 +266,23 @@ class TroughBuilder {
     for (int m = 0; m < d_.row.modules; ++m)
       for (std::size_t p = 0; p < at_.post_x.size(); ++p) {
         const double x = m * at_.module_length + at_.post_x[p];
-        const std::string name = place("receiver post", static_cast<int>(p), m);
-        const int top = node({x, 0, at_.focal_length}, name + ", head");
+        const std::string name = place_name("receiver post", static_cast<int>(p), m);
+        const int top = make_.node({x, 0, at_.focal_length}, name + ", head");
         run_to(top);
         const int foot = tube_node_at(out_.modules[static_cast<std::size_t>(m)], x);
-        fem::Member& post = member(foot, top, post_sec, post_mat, Vec3::UnitY(), name, "receiver post");
+        fem::Member& post = make_.member(foot, top, post_sec, post_mat, Vec3::UnitY(), name, "receiver post");
         post.offset_from = Vec3(0, 0, profile_depth(d_.tube.profile) / 2);
         // Hinged about the collector's y, which is the post's own z (its x runs along +z, its z along +y).
         post.release_from[fem::rz] = post.release_to[fem::rz] = true;
+        // Across the row a cantilever that carries the receiver, along it hinged at both ends.
+        const double height = at_.focal_length + at_.tube_to_vertex - profile_depth(d_.tube.profile) / 2;
+        out_.buckling.push_back({make_.last_member(), 2 * height, height, 0, r.posts.profile.shape});
         if (std::abs(x - drive_x) < nearest) {
           nearest = std::abs(x - drive_x);
           bracket = {top, foot};
         }
       }
-    run_to(node({at_.row_length, 0, at_.focal_length}, "receiver, last end"));
+    run_to(make_.node({at_.row_length, 0, at_.focal_length}, "receiver, last end"));
     fem::Spring hold;
     hold.node = bracket.first;
     hold.other = bracket.second;
@@ -370,11 +304,13 @@ class TroughBuilder {
     stand.foot = 0;
     stand.head = 1;
     f.sections = {section_of(p.profile)};
-    f.materials = {material_of(p.profile.material, plate_thickness(p.profile))};
+    f.materials = {material_of(p.profile.material, profile_thickness(p.profile))};
     fem::Member post;
     post.from = 0;
     post.to = 1;
-    post.up = Vec3::UnitY();  // the profile's depth stands across the row
+    post.up = rolled_up(p.profile, Vec3::UnitZ(), Vec3::UnitY());  // the depth stands across the row
+    stand.roll = profile_roll(p.profile);
+    stand.buckling = {{0, 2 * stand.height, 2 * stand.height, 0, p.profile.shape}};
     post.name = name;
     post.group = "pylon";
     f.members = {post};
@@ -406,12 +342,12 @@ class TroughBuilder {
 
   const TroughDesign& d_;
   TroughLayout at_;
-  Collector out_;
-  std::vector<std::string> material_keys_;
+  BodyMaker make_;
+  Collector& out_ = make_.out;
+  RibArms rib_arms_;
   std::vector<RibPart> ribs_;
   std::vector<int> starts_, ends_;  // tube end nodes on the rotation axis, per module
-  int tube_section_ = 0, tube_material_ = 0, rib_material_ = 0, purlin_section_ = 0, purlin_material_ = 0;
-  std::vector<int> rib_sections_;  // one per arm element
+  int tube_section_ = 0, tube_material_ = 0, purlin_section_ = 0, purlin_material_ = 0;
 };
 
 }  // namespace

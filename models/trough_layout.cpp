@@ -1,26 +1,53 @@
 #include "models/trough_layout.h"
 
+#include <Eigen/Core>
 #include <algorithm>
 #include <cmath>
+#include <string>
+#include <utility>
 
 #include "models/profile.h"
+#include "models/skin.h"
 
 namespace focalframe::models {
 namespace {
 
-// Arm nodes: the purlin stations and the ends are kept, each bay between them is cut into equal parts so that
-// the whole arm has at least `elements` elements.
+// Arm nodes: purlin stations, the panel points of a truss and the ends are kept; what lies between is cut so
+// that the whole arm has at least `elements` elements.
 void cut_arm(const TroughDesign& design, TroughLayout& layout, int refine) {
   const double root = layout.tube_half_width, rim = layout.width / 2;
-  const int purlins = design.purlins.count / 2;
-  const int bays = std::max(1, purlins);
-  const int parts = std::max(1, (design.ribs.elements + bays - 1) / bays) * refine;
+  const int purlins = design.purlins.count / 2, panels = design.ribs.kind == "truss" ? design.ribs.panels : 0;
+  std::vector<double> stops{0, 1};
+  for (int i = 1; i <= purlins; ++i) stops.push_back(static_cast<double>(i) / purlins);
+  for (int i = 1; i <= panels; ++i) stops.push_back(static_cast<double>(i) / panels);
+  std::sort(stops.begin(), stops.end());
+  const auto same = [](double a, double b) { return std::abs(a - b) < 1e-9; };
+  stops.erase(std::unique(stops.begin(), stops.end(), same), stops.end());
+
   layout.arm_y = {root};
-  for (int bay = 0; bay < bays; ++bay) {
+  std::vector<std::pair<double, int>> stop_at{{0.0, 0}};
+  for (std::size_t s = 0; s + 1 < stops.size(); ++s) {
+    const double from = stops[s], to = stops[s + 1];
+    const int parts =
+        std::max(1, static_cast<int>(std::ceil(design.ribs.elements * (to - from) - 1e-9))) * refine;
     for (int part = 1; part <= parts; ++part)
-      layout.arm_y.push_back(root + (rim - root) * (bay + static_cast<double>(part) / parts) / bays);
-    if (purlins > 0) layout.purlin_at.push_back(static_cast<int>(layout.arm_y.size()) - 1);
+      layout.arm_y.push_back(root + (rim - root) * (from + (to - from) * part / parts));
+    stop_at.emplace_back(to, static_cast<int>(layout.arm_y.size()) - 1);
   }
+  const auto index_of = [&](double stop) {
+    return std::find_if(stop_at.begin(), stop_at.end(), [&](const auto& s) { return same(s.first, stop); })
+        ->second;
+  };
+  for (int i = 1; i <= purlins; ++i) layout.purlin_at.push_back(index_of(static_cast<double>(i) / purlins));
+  for (int i = 0; i <= panels && panels > 0; ++i)
+    layout.panel_at.push_back(index_of(static_cast<double>(i) / panels));
+}
+
+// Across the trough: a point `below` under the mirror along its normal.
+Eigen::Vector2d under_mirror(const TroughLayout& layout, double y, double below) {
+  const fem::Vec3 normal = area_normal(y, layout.focal_length).normalized();
+  const fem::Vec3 at = surface_point(0, y, layout.focal_length) - normal * below;
+  return {at.y(), at.z()};
 }
 
 }  // namespace
@@ -40,8 +67,9 @@ TroughLayout lay_out(const TroughDesign& design, int refine) {
   layout.drive_pylon = row.drive_after_module >= 0 ? row.drive_after_module : row.modules / 2;
 
   const double tube_depth = profile_depth(design.tube.profile);
+  const std::string& tube = design.tube.profile.shape;
   layout.tube_half_width =
-      (design.tube.profile.shape == "rectangular-tube" ? design.tube.profile.width : tube_depth) / 2;
+      (tube == "rectangular-tube" || tube == "lattice-box" ? design.tube.profile.width : tube_depth) / 2;
   const double mirror = std::isnan(design.mirror.thickness) ? 0.0 : design.mirror.thickness;
   layout.tube_to_vertex =
       !std::isnan(row.tube_to_vertex) ? row.tube_to_vertex : row.tube_to_mirror + tube_depth / 2 + mirror;
@@ -50,20 +78,46 @@ TroughLayout lay_out(const TroughDesign& design, int refine) {
   layout.standoff =
       mirror + design.mirror.pad_height + (on_purlins ? profile_depth(design.purlins.profile) : 0.0);
 
+  layout.rib_line = layout.standoff;
+  if (design.ribs.kind != "plate") layout.rib_line += rib_seat(design, layout, 0);
+
   const double gap = std::isnan(row.end_gap) ? row.module_length / 50 : row.end_gap;
   const int ribs = design.ribs.per_module;
   for (int i = 0; i < ribs; ++i)
     layout.rib_x.push_back(gap + (row.module_length - 2 * gap) * i / std::max(1, ribs - 1));
   const int posts = design.receiver.posts.per_module;
   for (int i = 0; i < posts; ++i) layout.post_x.push_back(row.module_length * (i + 0.5) / posts);
+  // A lattice box carries posts at its ribs only: every post moves to the nearest one.
+  if (tube == "lattice-box")
+    for (double& x : layout.post_x)
+      x = *std::min_element(layout.rib_x.begin(), layout.rib_x.end(),
+                            [x](double a, double b) { return std::abs(a - x) < std::abs(b - x); });
   cut_arm(design, layout, refine);
   return layout;
 }
 
 double rib_depth(const TroughDesign& design, const TroughLayout& layout, double y) {
+  const RibsInput& ribs = design.ribs;
+  if (ribs.kind == "bent") return profile_depth(ribs.bar);
   const double root = layout.tube_half_width, rim = layout.width / 2;
   const double t = std::clamp((std::abs(y) - root) / (rim - root), 0.0, 1.0);
-  return design.ribs.depth_at_tube + t * (design.ribs.depth_at_tip - design.ribs.depth_at_tube);
+  if (ribs.lower_edge != "straight") return ribs.depth_at_tube + t * (ribs.depth_at_tip - ribs.depth_at_tube);
+  // Along the normal at y down to the line through the lower ends of root and rim.
+  const Eigen::Vector2d from = under_mirror(layout, root, layout.rib_line + ribs.depth_at_tube),
+                        to = under_mirror(layout, rim, layout.rib_line + ribs.depth_at_tip);
+  const double at = std::clamp(std::abs(y), root, rim);
+  const Eigen::Vector2d upper = under_mirror(layout, at, layout.rib_line),
+                        down = under_mirror(layout, at, layout.rib_line + 1) - upper, line = to - from;
+  const auto cross = [](const Eigen::Vector2d& a, const Eigen::Vector2d& b) {
+    return a.x() * b.y() - a.y() * b.x();
+  };
+  return cross(from - upper, line) / cross(down, line);
+}
+
+double rib_seat(const TroughDesign& design, const TroughLayout& layout, double y) {
+  if (design.ribs.kind == "plate") return rib_depth(design, layout, y) / 2;
+  const ProfileInput& p = design.ribs.kind == "truss" ? design.ribs.chords : design.ribs.bar;
+  return profile_depth(p) - profile_seat(p);
 }
 
 }  // namespace focalframe::models
