@@ -4,10 +4,8 @@
 #include <cmath>
 #include <set>
 
-#include "fem/units.h"
-#include "models/catalogue.h"
+#include "models/cure_ladders.h"
 #include "models/many_runs.h"
-#include "models/profile.h"
 #include "models/quantity.h"
 #include "models/trough_layout.h"
 
@@ -20,41 +18,12 @@ struct Idea {
   std::function<void(TroughDesign&)> apply;
 };
 
-/// The next size upwards of a plate thickness series common in workshops [m] (common practice, no source).
-double next_plate(double thickness) {
-  for (double t : {1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0, 12.0, 15.0, 20.0})
-    if (t * mm > thickness * 1.001) return t * mm;
-  return thickness * 1.25;
-}
-
 /// Upwards to a rating a catalogue would round to: 1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8 times a power of ten.
 double next_rating(double needed) {
   const double decade = std::pow(10.0, std::floor(std::log10(needed)));
   for (double step : {1.0, 1.2, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0})
     if (step * decade >= needed) return step * decade;
   return 10 * decade;
-}
-
-void bigger_profile(std::vector<Idea>& ideas, const std::string& part, const std::string& word,
-                    const ProfileInput& profile, std::function<ProfileInput&(TroughDesign&)> at) {
-  std::vector<ProfileInput> sizes;
-  if (profile.shape == "round-tube")
-    for (const RoundTubeSize& s : next_round_tubes(profile.outside_diameter, profile.wall)) {
-      ProfileInput next = profile;
-      next.outside_diameter = s.outside_diameter;
-      next.wall = s.wall;
-      sizes.push_back(next);
-    }
-  else if (profile.shape == "square-tube")
-    for (const SquareTubeSize& s : next_square_tubes(profile.side, profile.wall)) {
-      ProfileInput next = profile;
-      next.side = s.side;
-      next.wall = s.wall;
-      sizes.push_back(next);
-    }
-  if (sizes.size() > 4) sizes.resize(4);
-  for (const ProfileInput& next : sizes)
-    ideas.push_back({part, word + " " + sizes_text(next), [=](TroughDesign& d) { at(d) = next; }});
 }
 
 bool missed(const Assessment& a, const std::string& start) {
@@ -66,10 +35,6 @@ std::vector<Idea> ideas_for(const TroughDesign& d, const Assessment& a) {
   std::vector<Idea> ideas;
   const bool light = missed(a, "intercept") || missed(a, "lost-to-frame") || missed(a, "twist");
   const bool torque = missed(a, "moving-torque") || missed(a, "holding-torque");
-  const bool ribs = missed(a, "slope") || missed(a, "stress rib") || light;
-  if (light || missed(a, "stress torque tube") || missed(a, "wind-up"))
-    bigger_profile(ideas, "tube", "tube", d.tube.profile,
-                   [](TroughDesign& x) -> ProfileInput& { return x.tube.profile; });
   if ((light || torque) && std::isfinite(a.balancing_counterweight) &&
       std::abs(a.balancing_counterweight - d.counterweights.mass) > 1) {
     const double present = d.counterweights.mass, full = std::round(a.balancing_counterweight);
@@ -95,23 +60,6 @@ std::vector<Idea> ideas_for(const TroughDesign& d, const Assessment& a) {
   if (light && std::isfinite(d.drive.stiffness))
     ideas.push_back(
         {"drive stiffness", "drive twice as stiff", [](TroughDesign& x) { x.drive.stiffness *= 2; }});
-  if (ribs) {
-    const double plate = next_plate(d.ribs.thickness),
-                 depth = std::round(1.25 * d.ribs.depth_at_tube / (5 * mm)) * 5 * mm;
-    ideas.push_back({"ribs", "rib plate " + number_text(plate / mm) + " mm",
-                     [=](TroughDesign& x) { x.ribs.thickness = plate; }});
-    ideas.push_back({"ribs", "ribs " + number_text(depth / mm) + " mm deep at the tube",
-                     [=](TroughDesign& x) { x.ribs.depth_at_tube = depth; }});
-  }
-  if (missed(a, "stress pylon"))
-    bigger_profile(ideas, "pylons", "pylons", d.pylons.profile,
-                   [](TroughDesign& x) -> ProfileInput& { return x.pylons.profile; });
-  if (missed(a, "receiver-shift") || missed(a, "stress receiver post"))
-    bigger_profile(ideas, "posts", "receiver posts", d.receiver.posts.profile,
-                   [](TroughDesign& x) -> ProfileInput& { return x.receiver.posts.profile; });
-  if (missed(a, "stress purlin"))
-    bigger_profile(ideas, "purlins", "purlins", d.purlins.profile,
-                   [](TroughDesign& x) -> ProfileInput& { return x.purlins.profile; });
   if (d.row.modules > 2 && (light || torque || missed(a, "wind-up"))) {
     const int fewer = d.row.modules - (d.row.modules > 3 ? 2 : 1);
     ideas.push_back(
@@ -152,6 +100,18 @@ class Trials {
     for (std::size_t i = 0; i < fresh.size(); ++i)
       if (!std::isnan(results[i].mass)) keep(fresh[i], results[i]);
   }
+
+  /// Adds ideas for later runs; returns their indices.
+  std::vector<std::size_t> add(const std::string& part, const std::vector<Rung>& rungs) {
+    std::vector<std::size_t> numbers;
+    for (const Rung& rung : rungs) {
+      numbers.push_back(ideas_.size());
+      ideas_.push_back({part, rung.text, rung.apply});
+    }
+    return numbers;
+  }
+
+  const std::string& part(std::size_t idea) const { return ideas_[idea].part; }
 
   /// Ideas that mend limit `key` alone, best (fewest limits missed, then lightest) first.
   std::vector<std::size_t> menders(const std::string& key) const {
@@ -217,6 +177,35 @@ class Trials {
   std::set<Choice> tried_;
 };
 
+// Every ladder's first sizes; then on upwards while a limit it is made for is mended by none of them.
+void climb(Trials& trials, const std::vector<Ladder>& ladders, const std::vector<std::string>& keys,
+           std::vector<Choice> singles, const Progress& progress) {
+  constexpr std::size_t step = 4;
+  const auto rungs = [](const Ladder& ladder, std::size_t from) {
+    const auto begin =
+        ladder.rungs.begin() + static_cast<std::ptrdiff_t>(std::min(from, ladder.rungs.size()));
+    const auto end =
+        ladder.rungs.begin() + static_cast<std::ptrdiff_t>(std::min(from + step, ladder.rungs.size()));
+    return std::vector<Rung>(begin, end);
+  };
+  const auto mended = [&](const Ladder& ladder) {
+    return std::all_of(keys.begin(), keys.end(), [&](const std::string& key) {
+      if (!aims_at(ladder, key)) return true;
+      const std::vector<std::size_t> good = trials.menders(key);
+      return std::any_of(good.begin(), good.end(),
+                         [&](std::size_t i) { return trials.part(i) == ladder.part; });
+    });
+  };
+  for (std::size_t from = 0;; from += step) {
+    for (const Ladder& ladder : ladders)
+      if (from == 0 || !mended(ladder))
+        for (std::size_t i : trials.add(ladder.part, rungs(ladder, from))) singles.push_back({i});
+    if (singles.empty()) return;
+    trials.run(singles, progress);
+    singles.clear();
+  }
+}
+
 Choice sorted(Choice c) {
   std::sort(c.begin(), c.end());
   c.erase(std::unique(c.begin(), c.end()), c.end());
@@ -230,12 +219,14 @@ std::vector<Cure> find_cures(const TroughDesign& design, const loads::Coefficien
   std::vector<std::string> keys;
   for (const Criterion& c : assessment.criteria)
     if (!c.met()) keys.push_back(c.key);
+  if (keys.empty()) return {};
   const std::vector<Idea> ideas = ideas_for(design, assessment);
-  if (keys.empty() || ideas.empty()) return {};
+  const std::vector<Ladder> ladders = size_ladders(design, assessment);
+  if (ideas.empty() && ladders.empty()) return {};
   Trials trials(design, table, assessment, ideas);
   std::vector<Choice> singles;
   for (std::size_t i = 0; i < ideas.size(); ++i) singles.push_back({i});
-  trials.run(singles, progress);
+  climb(trials, ladders, keys, singles, progress);
 
   // Pairs of ideas that each mend something; the two best menders of every missed limit.
   std::vector<std::vector<std::size_t>> menders;
