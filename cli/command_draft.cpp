@@ -91,6 +91,17 @@ int draft_trough(const DraftCommand& command, const std::string& name) {
     std::cerr << to_text(stops, true);
     return bad_input;
   }
+  const double module_length = design.row.module_length;
+  if (std::abs(sizes.module_length - module_length) > 1e-3) {
+    Message m =
+        about("command line", "--module-length",
+              "Modules of " + models::quantity_text(sizes.module_length, Quantity::length) +
+                  " do not make up a row of " + models::quantity_text(sizes.length, Quantity::length) +
+                  ". Written are " + std::to_string(design.row.modules) + " of " +
+                  models::quantity_text(module_length, Quantity::length) + ".");
+    m.level = Level::note;
+    std::cerr << to_text(std::vector<Message>{std::move(m)}, true);
+  }
   return write_draft(command.file, text,
                      "a trough to start from. Change what is yours, then: focalframe check " + command.file);
 }
