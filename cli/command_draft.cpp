@@ -7,7 +7,11 @@
 #include "cli/draft.h"
 #include "cli/exit_code.h"
 #include "cli/quantity.h"
+#include "cli/shipped_tables.h"
 #include "cli/write_file.h"
+#include "fem/mechanism.h"
+#include "models/schema.h"
+#include "models/settle.h"
 
 namespace focalframe::cli {
 namespace {
@@ -69,6 +73,34 @@ int write_draft(const std::string& file, const std::string& text, const std::str
   return all_met;
 }
 
+// Rules of thumb first, then sizes up the catalogue until the design meets its own limits.
+models::Settled settled_trough(const DraftSizes& sizes) {
+  models::Settled out;
+  out.design = starter_trough(sizes);
+  std::vector<Message> messages;
+  const auto table = find_table(out.design.wind.table, "", {}, messages);
+  if (!table || has_stop(messages)) return out;
+  for (const models::Violation& v : models::validate(out.design))
+    if (v.level == models::Violation::Level::stop) return out;  // told when the text is read again
+  try {
+    return models::settle(out.design, table->table);
+  } catch (const fem::Mechanism&) {
+    return out;
+  }
+}
+
+// "It meets its own limits" or which it does not.
+std::string standing(const models::Settled& settled) {
+  if (settled.rounds == 0) return {};
+  if (settled.missed.empty())
+    return "It meets its own limits (checked " + std::to_string(settled.rounds) + " times).";
+  std::string names;
+  for (const models::Criterion& c : settled.missed) names += (names.empty() ? "" : ", ") + c.name;
+  return "It does NOT meet these of its own limits: " + names +
+         ". A shorter row, shorter modules or another "
+         "kind of tube and ribs is needed.";
+}
+
 int draft_trough(const DraftCommand& command, const std::string& name) {
   std::vector<Message> messages;
   const DraftSizes sizes = read_sizes(command, messages);
@@ -76,7 +108,8 @@ int draft_trough(const DraftCommand& command, const std::string& name) {
     std::cerr << to_text(messages, true);
     return bad_input;
   }
-  const models::TroughDesign design = starter_trough(sizes);
+  const models::Settled settled = settled_trough(sizes);
+  const models::TroughDesign& design = settled.design;
   const std::string text = command.every_field ? every_field_text(design, name) : trough_text(design, name);
   // A starter design that check would refuse is of no use to anybody: the sizes given do not fit together.
   const DesignFile trial = read_design_text(text, command.file);
@@ -103,7 +136,8 @@ int draft_trough(const DraftCommand& command, const std::string& name) {
     std::cerr << to_text(std::vector<Message>{std::move(m)}, true);
   }
   return write_draft(command.file, text,
-                     "a trough to start from. Change what is yours, then: focalframe check " + command.file);
+                     "a trough to start from. " + standing(settled) +
+                         "\nChange what is yours, then: focalframe check " + command.file);
 }
 
 }  // namespace

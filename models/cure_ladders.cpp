@@ -96,11 +96,10 @@ void tube_ladders(std::vector<Ladder>& all, const TroughDesign& d, const Keys& l
                    [](TroughDesign& x) -> ProfileInput& { return x.tube.profile; });
     return;
   }
-  profile_ladder(all, "box chords", {"stress torque box chord", "buckling torque box chord"}, "box chords", d,
+  profile_ladder(all, "box chords", {"stress box chord", "buckling box chord"}, "box chords", d,
                  [](TroughDesign& x) -> ProfileInput& { return x.tube.chords; });
-  profile_ladder(all, "box webs",
-                 with(light, {"stress torque box web", "buckling torque box web", "wind-up"}), "box webs", d,
-                 [](TroughDesign& x) -> ProfileInput& { return x.tube.webs; });
+  profile_ladder(all, "box webs", with(light, {"stress box web", "buckling box web", "wind-up"}), "box webs",
+                 d, [](TroughDesign& x) -> ProfileInput& { return x.tube.webs; });
 }
 
 void rib_ladders(std::vector<Ladder>& all, const TroughDesign& d, const Keys& light) {
@@ -140,6 +139,13 @@ bool fits(const TroughDesign& design) {
 }
 
 }  // namespace
+
+double next_rating(double needed) {
+  const double decade = std::pow(10.0, std::floor(std::log10(needed)));
+  for (double step : {1.0, 1.2, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0})
+    if (step * decade >= needed) return step * decade;
+  return 10 * decade;
+}
 
 bool aims_at(const Ladder& ladder, const std::string& key) {
   return std::any_of(ladder.keys.begin(), ladder.keys.end(),

@@ -23,6 +23,9 @@ struct Ladder {
   std::vector<Rung> rungs;        ///< the first few are tried anyhow, the others only while a limit is missed
 };
 
+/// Upwards to a rating a catalogue would round to: 1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8 times a power of ten.
+double next_rating(double needed);
+
 /// True when `key` begins with one of the ladder's.
 bool aims_at(const Ladder& ladder, const std::string& key);
 

@@ -18,14 +18,6 @@ struct Idea {
   std::function<void(TroughDesign&)> apply;
 };
 
-/// Upwards to a rating a catalogue would round to: 1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8 times a power of ten.
-double next_rating(double needed) {
-  const double decade = std::pow(10.0, std::floor(std::log10(needed)));
-  for (double step : {1.0, 1.2, 1.5, 2.0, 2.5, 3.0, 4.0, 5.0, 6.0, 8.0, 10.0})
-    if (step * decade >= needed) return step * decade;
-  return 10 * decade;
-}
-
 bool missed(const Assessment& a, const std::string& start) {
   return std::any_of(a.criteria.begin(), a.criteria.end(),
                      [&](const Criterion& c) { return !c.met() && c.key.rfind(start, 0) == 0; });

@@ -8,8 +8,10 @@
 
 #include "cli/draft_xml.h"
 #include "cli/frame_file.h"
+#include "cli/shipped_tables.h"
 #include "cli/trough_reader.h"
 #include "models/schema.h"
+#include "models/settle.h"
 #include "tests/cli/designs.h"
 
 using namespace focalframe;
@@ -27,6 +29,26 @@ TEST_CASE("starter troughs of every size pass their own check without a STOP", "
       CHECK(design.trough.parabola.aperture == Approx(aperture));
       CHECK(design.trough.row.modules * design.trough.row.module_length == Approx(length));
     }
+}
+
+TEST_CASE("a draft settles where it meets its own limits, narrow and wide", "[draft][settle]") {
+  std::vector<Message> messages;
+  const auto table = find_table("trough-computed", "", {}, messages);
+  REQUIRE(table);
+  for (const double aperture : {1.5, 2.4, 4.0, 5.8}) {
+    DraftSizes sizes;
+    sizes.aperture = aperture;
+    sizes.modules = 2;
+    const models::Settled settled = models::settle(starter_trough(sizes), table->table);
+    std::string missed;
+    for (const models::Criterion& c : settled.missed) missed += c.name + " ";
+    INFO(aperture << " m, " << settled.rounds << " rounds, missed: " << missed);
+    CHECK(settled.missed.empty());
+    CHECK(settled.design.parabola.aperture == aperture);
+    const DesignFile design = read_design_text(trough_text(settled.design, "row"), "row.xml");
+    INFO(to_text(design.messages, true));
+    CHECK(design.sound());
+  }
 }
 
 TEST_CASE("sizes that are given are the sizes that are written", "[draft]") {
