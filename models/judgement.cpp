@@ -74,9 +74,10 @@ void judge_buckling(const TroughDesign& d, Assessment& a) {
   const bool judged = !d.limits.strength.empty() || !std::isnan(d.limits.strength_factor);
   for (const auto& [group, use] : a.strength.buckling) {
     if (use.part.empty()) continue;
+    const std::string name = "buckl. " + (group == "receiver post" ? "post" : group);  // the screen is narrow
     Criterion c{Question::together,
                 "buckling " + group,
-                group + " buckling",
+                name,
                 Quantity::ratio,
                 use.used,
                 not_given,
@@ -176,9 +177,9 @@ void remark(const TroughDesign& d, Assessment& a) {
   for (const Criterion& c : a.criteria)
     if (c.question == Question::together && c.judged() && c.used() > 2) {
       add(warn, "", "",
-          c.name + " is stressed to " + number_text(c.used()) +
-              " times what is allowed: it would yield, and light and deflections here are those of a frame "
-              "that does not.");
+          c.name + " is stressed to " + number_text(c.used()) + " times what is allowed: it would " +
+              std::string(c.key.starts_with("buckling") ? "buckle" : "yield") +
+              ", and light and deflections here are those of a frame that does not.");
       break;
     }
   if (a.worst_light >= 0) {
@@ -219,11 +220,11 @@ void caution(const TroughDesign& d, const Assessment& a, std::vector<std::string
   if (d.ribs.kind == "truss")
     out.push_back(
         "Truss ribs are welded throughout and both chords start on a rigid hub; the hub, its pads "
-        "and all joints are yours to check.");
+        "and all joints are yours to check; wind on the bars themselves is left out.");
   if (d.tube.profile.shape == "lattice-box")
     out.push_back(
         "The lattice box has rigid end frames, and a hub at every rib that holds its section in "
-        "shape; both, and all joints, are yours to check.");
+        "shape; both, and all joints, are yours to check; wind on the bars themselves is left out.");
   if (d.mirror.kind == "sheet")
     out.push_back(
         "The mirror carries no frame load here; a riveted sheet would stiffen twist and slope, a loose one "

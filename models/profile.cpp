@@ -1,5 +1,6 @@
 #include "models/profile.h"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 #include <cstdio>

@@ -1,5 +1,6 @@
 #include "models/rib_arms.h"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
 
@@ -95,10 +96,8 @@ void RibArms::add_arm(RibPart& rib, std::size_t side, const std::string& name) {
     rib.members[side].push_back(make_.last_member());
     rib.nodes[side].push_back(next);
     if (kind == "plate") hold_plate(static_cast<int>(e));
-    if (kind == "bent") {
-      const double sideways = std::max(held_sideways(), 0.0);
-      make_.out.buckling.push_back({make_.last_member(), 2 * arm_length, sideways, 0, along.shape});
-    }
+    if (kind == "bent")
+      make_.out.buckling.push_back({make_.last_member(), 2 * arm_length, held_sideways(), 0, along.shape});
     if (kind == "truss") {
       const double panel = arm_length / d_.ribs.panels;
       make_.out.buckling.push_back({make_.last_member(), panel,

@@ -1,5 +1,6 @@
 #include "models/torque_box.h"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <array>
 #include <cmath>
@@ -85,8 +86,8 @@ class BoxBuilder {
     const double half = corner(0).norm();
     for (int c = 0; c < 4; ++c) {
       fem::Spring tie;
-      tie.node = s.node[static_cast<std::size_t>(c)];
-      tie.other = hub;
+      tie.node = hub;  // acts where the chord is
+      tie.other = s.node[static_cast<std::size_t>(c)];
       const double in_plane = E * web.A / half, along = 12 * E * std::min(web.Iy, web.Iz) / std::pow(half, 3);
       tie.stiffness << along, in_plane, in_plane, 0, 0, 0;
       tie.name = place_name("hub of rib", rib, module_);
@@ -106,7 +107,7 @@ class BoxBuilder {
     const Vec3 up = rolled_up(profile, along, lacing ? Vec3(outwards.cross(along)) : inwards[i]);
     fem::Member& m =
         make_.member(a.node[i], b.node[j], lacing ? web_ : chord_, lacing ? web_material_ : chord_material_,
-                     up, name, lacing ? "torque box web" : "torque box chord");
+                     up, name, lacing ? "box web" : "box chord");
     m.offset_from = a.arm[i];
     m.offset_to = b.arm[j];
     make_.out.buckling.push_back({make_.last_member(), along.norm(), along.norm(), 0, profile.shape});

@@ -24,12 +24,14 @@ void cut_arm(const TroughDesign& design, TroughLayout& layout, int refine) {
   const auto same = [](double a, double b) { return std::abs(a - b) < 1e-9; };
   stops.erase(std::unique(stops.begin(), stops.end(), same), stops.end());
 
+  const int elements = design.ribs.elements;
   layout.arm_y = {root};
   std::vector<std::pair<double, int>> stop_at{{0.0, 0}};
   for (std::size_t s = 0; s + 1 < stops.size(); ++s) {
     const double from = stops[s], to = stops[s + 1];
-    const int parts =
-        std::max(1, static_cast<int>(std::ceil(design.ribs.elements * (to - from) - 1e-9))) * refine;
+    // A bent chord is pushed out between panel points: it takes some pieces there to show that.
+    const int least = panels > 0 ? 3 : 1, wanted = static_cast<int>(std::ceil(elements * (to - from) - 1e-9));
+    const int parts = std::max(least, wanted) * refine;
     for (int part = 1; part <= parts; ++part)
       layout.arm_y.push_back(root + (rim - root) * (from + (to - from) * part / parts));
     stop_at.emplace_back(to, static_cast<int>(layout.arm_y.size()) - 1);

@@ -71,6 +71,14 @@ std::string stress(const Assessment& a) {
   return t.text();
 }
 
+std::string buckling(const Assessment& a) {
+  Table t({"group", "member", "used", "compression_N", "resistance_N", "state", "pattern"});
+  for (const auto& [group, use] : a.strength.buckling)
+    t.add({group, use.part, number(use.used), number(use.compression), number(use.resistance),
+           models::place_text(use.state), models::spread_text(use.spread)});
+  return t.text();
+}
+
 std::string drive(const Assessment& a) {
   Table t({"elevation_rad", "moving_torque_N_m"});
   for (const auto& [elevation, torque] : a.strength.moving_torque) t.add({number(elevation), number(torque)});
@@ -106,8 +114,9 @@ std::string changes(const Assessment& a) {
 }  // namespace
 
 std::map<std::string, std::string> csv_tables(const Assessment& a) {
-  return {{"limits.csv", limits(a)}, {"light.csv", light(a)},   {"stress.csv", stress(a)},
-          {"drive.csv", drive(a)},   {"ground.csv", ground(a)}, {"changes.csv", changes(a)}};
+  return {{"limits.csv", limits(a)},     {"light.csv", light(a)}, {"stress.csv", stress(a)},
+          {"buckling.csv", buckling(a)}, {"drive.csv", drive(a)}, {"ground.csv", ground(a)},
+          {"changes.csv", changes(a)}};
 }
 
 }  // namespace focalframe::cli

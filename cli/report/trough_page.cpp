@@ -106,9 +106,18 @@ std::string strength_body(const TroughReport& r) {
                     use.allowed > 0 ? text_of("%.0f", use.allowed / MPa) : "not known",
                     use.allowed > 0 ? text_of("%.0f %%", 100 * use.used) : "-", models::place_text(use.state),
                     models::spread_text(use.spread)});
-  return figure(r, "strength") + html_table({"group", "worst member", ">stress MPa", ">allowed MPa", ">used",
-                                             "state", "pressure pattern"},
-                                            rows);
+  std::vector<std::vector<std::string>> columns;
+  for (const auto& [group, use] : r.assessment.strength.buckling)
+    columns.push_back({group, use.part, shown(use.compression, Quantity::force),
+                       shown(use.resistance, Quantity::force), text_of("%.0f %%", 100 * use.used),
+                       models::place_text(use.state), models::spread_text(use.spread)});
+  return figure(r, "strength") +
+         html_table(
+             {"group", "worst member", ">stress MPa", ">allowed MPa", ">used", "state", "pressure pattern"},
+             rows) +
+         html_table({"buckling of", "worst member", ">pushed by", ">bears", ">used with its moments", "state",
+                     "pressure pattern"},
+                    columns);
 }
 
 std::string drive_body(const TroughReport& r) {

