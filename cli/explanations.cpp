@@ -96,7 +96,7 @@ std::string explain(const std::string& what) {
     if (words.size() == 1 && this_element) out += element_text(element);
     if (words.size() > 2 || (words.size() == 2 && !this_element)) continue;
     for (const models::Field& f : element.fields)
-      if (f.name == words.back()) out += field_text(element, f);
+      if (lower(f.name) == words.back()) out += field_text(element, f);
   }
   return out;
 }
