@@ -38,6 +38,12 @@ std::string value_text(double value, const models::Field& field) {
                            : plain(value) + " s";
     case Quantity::temperature:
       return plain(value - 273.15) + " degC";
+    case Quantity::area:
+      return plain(value / (mm * mm)) + " mm2";
+    case Quantity::section_modulus:
+      return plain(value / (mm * mm * mm)) + " mm3";
+    case Quantity::area_moment:
+      return plain(value / (mm * mm * mm * mm)) + " mm4";
     case Quantity::torque:
       return std::abs(value) >= 1e3 ? plain(value / kN) + " kN m" : plain(value) + " N m";
     case Quantity::force:
