@@ -25,6 +25,12 @@ bool lift(double& rating, double needed, DriveInput& drive) {
 bool enlarge(TroughDesign& design, const Assessment& a) {
   bool changed = lift(design.drive.moving_torque, std::abs(a.strength.moving.torque), design.drive);
   changed = lift(design.drive.holding_torque, std::abs(a.strength.holding.torque), design.drive) || changed;
+  // A receiver that sags between its posts is helped by one more of them.
+  for (const Criterion& c : a.criteria)
+    if (c.key == "receiver-shift" && !c.met() && design.receiver.posts.per_module < 12) {
+      ++design.receiver.posts.per_module;
+      changed = true;
+    }
   for (const Ladder& ladder : size_ladders(design, a)) {
     // The second size of a catalogue is about one step of strength; the first is often a shade of wall.
     ladder.rungs[std::min<std::size_t>(1, ladder.rungs.size() - 1)].apply(design);
