@@ -35,7 +35,8 @@ bool gives_way(const FrameFile& file, const FrameResults& results) {
           file.frame.materials[static_cast<std::size_t>(file.frame.members[m].material)].yield;
       if (yield > 0 && one.stresses[m].stress > yield) return true;
     }
-    if (!one.buckling.empty() && one.buckling.front().factor < 1) return true;
+    if (!one.buckling.modes.empty() && one.buckling.modes.front().factor < 1) return true;
+    if (one.second_order.asked && (!one.second_order.stable || one.second_order.used > 1)) return true;
   }
   return false;
 }

@@ -32,6 +32,7 @@ const std::vector<std::string> draft_kinds{"trough", "frame", "xsd"};
 struct Typed {
   DesignCommand check, modes;
   DraftCommand draft;
+  FrameCommand frame;
   std::map<std::string, std::string> sizes;
   std::string table;
   std::vector<std::string> why;
@@ -75,6 +76,13 @@ void add_commands(CLI::App& app, Typed& typed) {
 
   CLI::App* why = app.add_subcommand("why", "what a word of the report or of the design file means");
   why->add_option("WHAT", typed.why, "such as: light caught, STUCK, depth-at-tube")->type_name("");
+  CLI::App* frame = app.add_subcommand("frame", "write the built frame of a row, node by node, as a design");
+  frame->add_option("DESIGN", typed.frame.design, "design file")->required()->type_name("");
+  frame->add_option("FILE", typed.frame.file, "file to write; never over an existing one")
+      ->required()
+      ->type_name("");
+  frame->add_option("--elevation", typed.frame.elevation, "pose, such as 45deg; 90 deg is the zenith")
+      ->type_name("ANGLE");
 
   CLI::App* tables = app.add_subcommand("tables", "wind coefficient tables: list them, or show one");
   tables->add_option("NAME", typed.table, "name of a shipped table or path of your own")->type_name("");
@@ -111,6 +119,7 @@ int run(CLI::App& app, Typed& typed) {
   if (app.got_subcommand("check")) return run_check(typed.check);
   if (app.got_subcommand("modes")) return run_modes(typed.modes);
   if (app.got_subcommand("why")) return run_why(typed.why);
+  if (app.got_subcommand("frame")) return run_frame(typed.frame);
   if (app.got_subcommand("tables")) return run_tables(typed.table);
   if (app.got_subcommand("draft")) {
     for (const std::string& name : draft_size_options())

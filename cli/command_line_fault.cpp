@@ -11,7 +11,7 @@ namespace {
 
 using Words = std::vector<std::string>;
 
-const Words commands{"check", "draft", "modes", "tables"};
+const Words commands{"check", "draft", "frame", "modes", "tables"};
 const Words draft_kinds{"trough", "frame", "xsd"};
 
 struct Options {
@@ -26,6 +26,7 @@ Options options_of(const std::string& command) {
     for (const std::string& name : draft_size_options()) options.with_value.push_back("--" + name);
     return options;
   }
+  if (command == "frame") return {{"--help"}, {"--elevation"}};
   if (command == "tables") return {{"--help"}, {}};
   return {{"--help", "--version"}, {}};
 }

@@ -4,6 +4,7 @@
 
 #include "cli/command_check.h"
 #include "cli/command_frame.h"
+#include "cli/command_frame_file.h"
 #include "cli/command_modes.h"
 #include "cli/design_file.h"
 #include "cli/exit_code.h"
@@ -68,6 +69,17 @@ int run_modes(const DesignCommand& command) {
   if (!read_sound(command, design)) return exit_code(design.messages);
   if (design.kind == "frame") return run_frame_modes(design, command);
   return run_trough_modes(design, command);
+}
+
+int run_frame(const FrameCommand& command) {
+  DesignFile design;
+  DesignCommand reading;
+  reading.design = command.design;
+  if (!read_sound(reading, design)) return exit_code(design.messages);
+  if (design.kind != "frame") return write_trough_frame(design, command);
+  std::cerr << to_text(
+      about_file(command.design, "This design is a frame already: check and modes take it."));
+  return bad_input;
 }
 
 }  // namespace focalframe::cli

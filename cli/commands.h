@@ -22,8 +22,15 @@ struct DraftCommand {
   std::vector<std::pair<std::string, std::string>> sizes;
 };
 
+struct FrameCommand {
+  std::string design, file;          ///< paths; `file` must not exist
+  std::string elevation = "90 deg";  ///< as typed
+};
+
 int run_check(const DesignCommand& command);
 int run_modes(const DesignCommand& command);
+/// Writes the built frame of a row in one pose, with its load cases, as a kind="frame" design.
+int run_frame(const FrameCommand& command);
 int run_draft(const DraftCommand& command);
 /// Lists the shipped coefficient tables, or shows one (name or path).
 int run_tables(const std::string& name);

@@ -114,7 +114,8 @@ std::string frame_starter_text(const std::string& name) {
     <!-- What members are made of. Without density they have no mass. -->
     <material id="steel" E="210 GPa" G="81 GPa" density="7850 kg/m3" yield="235 MPa"/>
 
-    <!-- Cross-sections: round-tube, square-tube, rectangular-tube, round-bar, flat or properties. -->
+    <!-- Cross-sections: round-tube, square-tube, rectangular-tube, round-bar, flat, angle, channel (open:
+         weak in torsion) or properties. -->
     <section id="post"  shape="square-tube" side="80 mm" wall="4 mm"/>
     <section id="brace" shape="round-tube" outside-diameter="33.7 mm" wall="2.6 mm"/>
 
@@ -132,10 +133,13 @@ std::string frame_starter_text(const std::string& name) {
     <member id="brace" from="knee" to="tip"  section="brace" material="steel" up="0 0 1" release-from="ry rz" release-to="ry rz"/>
 
     <!-- What holds it: fixed freedoms, or springs to the ground such as
-         <spring node="foot" rx="3 MN m/rad"/>. -->
+         <spring node="foot" rx="3 MN m/rad"/>. Also: offset (rigid arm at a member's end), end-spring
+         (a bolted joint that gives), joint (hinge between two nodes in one place), x-axis on supports
+         and springs (their own axes). -->
     <support node="foot" fix="ux uy uz rx ry rz"/>
 
-    <!-- What acts on it, in named cases. -->
+    <!-- What acts on it, in named cases. Also: point-load, temperature, support-movement; a member-load may
+         begin, end and grow (from, to, fy-to). -->
     <mass node="tip" value="25 kg"/>
     <gravity case="weight" value="9.80665 m/s2" direction="0 0 -1"/>
     <load case="pull" node="tip" fx="200 N" fy="150 N"/>

@@ -1,5 +1,6 @@
 #include "cli/frame_element.h"
 
+#include <Eigen/Geometry>
 #include <algorithm>
 #include <charconv>
 #include <cmath>
@@ -138,6 +139,37 @@ std::optional<fem::Vec3> FrameElementReader::direction(const std::string& attrib
   say(attribute, good ? "A direction cannot be zero."
                       : "A direction is three plain numbers separated by spaces, such as 0 0 1.");
   return std::nullopt;
+}
+
+std::string FrameElementReader::word(const std::string& attribute,
+                                     const std::vector<std::string>& allowed) const {
+  const std::string found = text(attribute);
+  if (!has(attribute) || std::find(allowed.begin(), allowed.end(), found) != allowed.end()) return found;
+  Message& m = say(attribute, "This is one of: " + joined(allowed) + ".");
+  if (const std::string near = nearest_name(found, allowed); !near.empty())
+    m.likely = written(attribute, near);
+  return "";
+}
+
+fem::Mat3 FrameElementReader::axes() const {
+  if (!has("x-axis")) {
+    if (has("up")) say("up", "Own axes need \"x-axis\" too: three numbers for the direction of x.");
+    return fem::Mat3::Identity();
+  }
+  const auto x = direction("x-axis"), given = direction("up");
+  if (!x || (has("up") && !given)) return fem::Mat3::Identity();
+  const fem::Vec3 along = x->normalized(), upright(0, 0, 1), sideways(1, 0, 0);
+  const bool steep = along.cross(upright).norm() < 1e-6;
+  const fem::Vec3 up = given ? given->normalized() : steep ? sideways : upright;
+  if (along.cross(up).norm() < 1e-6) {
+    say("up", "\"up\" is parallel to \"x-axis\", so it cannot say where z is.");
+    return fem::Mat3::Identity();
+  }
+  fem::Mat3 columns;
+  columns.col(0) = along;
+  columns.col(1) = up.cross(along).normalized();
+  columns.col(2) = along.cross(columns.col(1));
+  return columns;
 }
 
 }  // namespace focalframe::cli

@@ -27,6 +27,10 @@ class FrameElementReader {
   fem::Six freedoms(const std::string& attribute) const;
   /// Three plain numbers that are not all zero.
   std::optional<fem::Vec3> direction(const std::string& attribute) const;
+  /// One of `allowed`; empty when missing or complained about.
+  std::string word(const std::string& attribute, const std::vector<std::string>& allowed) const;
+  /// Axes (columns) from "x-axis" and "up"; the frame's own when neither is there.
+  fem::Mat3 axes() const;
 
   /// `attribute` empty: about the element as a whole.
   Message& say(const std::string& attribute, std::string text, Level level = Level::stop) const;

@@ -7,6 +7,8 @@
 
 #include "fem/assembly.h"
 #include "fem/diagram.h"
+#include "fem/member_loads.h"
+#include "fem/near_mechanism.h"
 
 namespace focalframe::cli {
 namespace {
@@ -54,10 +56,46 @@ MemberStress stress_of(const fem::Frame& frame, const fem::LoadCase& load, const
   return worst;
 }
 
-void add_buckling(FrameResults& results, const fem::Frame& frame, const std::vector<fem::LoadCase>& loads,
+// Greatest stress and share of yield over the pieces, with the forces of the bent shape.
+void stress_when_bent(const fem::InsideBuckling& inside, const fem::Response& response,
+                      FrameSecondOrder& out) {
+  const fem::Frame& frame = inside.divided.frame;
+  const std::vector<fem::LoadCase> own = fem::loads_by_member(frame, inside.load);
+  for (std::size_t m = 0; m < inside.divided.pieces.size(); ++m)
+    for (const int piece : inside.divided.pieces[m]) {
+      const auto p = static_cast<std::size_t>(piece);
+      const double stress = stress_of(frame, own[p], response, piece).stress;
+      if (std::isnan(stress)) continue;
+      const double yield = frame.materials[static_cast<std::size_t>(frame.members[p].material)].yield;
+      if (!(stress <= out.stress)) out.stress = stress, out.member = static_cast<int>(m);
+      if (yield > 0 && !(stress / yield <= out.used)) out.used = stress / yield;
+    }
+}
+
+void add_second_order(FrameCase& one) {
+  if (one.buckling.modes.empty() || one.buckling.modes.front().factor >= 10) return;
+  FrameSecondOrder& out = one.second_order;
+  out.asked = true;
+  const auto greatest = [](const fem::Response& r) {
+    return r.displacement.leftCols<3>().rowwise().norm().maxCoeff();
+  };
+  try {
+    const fem::Frame& frame = one.buckling.divided.frame;
+    const fem::SecondOrder bent = fem::second_order(frame, one.buckling.load);
+    out.stable = true;
+    out.first = greatest(fem::StaticSolver(frame).solve(one.buckling.load));
+    out.second = greatest(bent.response);
+    stress_when_bent(one.buckling, bent.response, out);
+  } catch (const fem::Unstable&) {
+    out.stable = false;
+  }
+}
+
+void add_buckling(FrameResults& results, const FrameFile& file, const std::vector<fem::LoadCase>& loads,
                   int count) {
   for (std::size_t i = 0; i < loads.size(); ++i) try {
-      results.cases[i].buckling = fem::buckling_modes(frame, loads[i], count, {}, 1e6);
+      results.cases[i].buckling = fem::buckling_inside(frame_in_case(file, i), loads[i], count, 1e6);
+      add_second_order(results.cases[i]);
     } catch (const std::exception& error) {
       results.remarks.push_back("case " + loads[i].name + ": buckling was not computed: " + error.what());
     }
@@ -69,7 +107,7 @@ void add_modes(FrameResults& results, const FrameFile& file, int count) {
     return;
   }
   try {
-    results.modes = fem::natural_modes(file.frame, count);
+    results.modes = fem::modes_inside(file.frame, count);
   } catch (const std::exception& error) {
     results.remarks.push_back(std::string("frequencies were not computed: ") + error.what());
   }
@@ -95,7 +133,16 @@ FrameResults compute_frame(const FrameFile& file, int mode_count, int buckling_c
   results.mass = fem::total_mass(file.frame).mass;
   const fem::StaticSolver solver(file.frame);
   results.condition_estimate = solver.condition_estimate();
+  results.smallest_pivot_ratio = solver.smallest_pivot_ratio();
+  if (results.smallest_pivot_ratio < 1e-7)
+    if (const auto near = fem::near_mechanism(file.frame)) {
+      std::string text = near->what();
+      if (text.ends_with('.')) text.pop_back();
+      results.remarks.push_back("nearly a mechanism: " + text);
+    }
   std::vector<fem::Response> responses = solver.solve(loads);
+  for (std::size_t i = 0; i < file.movements.size(); ++i)
+    if (!file.movements[i].empty()) responses[i] = fem::StaticSolver(frame_in_case(file, i)).solve(loads[i]);
   for (std::size_t i = 0; i < loads.size(); ++i) {
     FrameCase one;
     one.name = loads[i].name;
@@ -106,7 +153,7 @@ FrameResults compute_frame(const FrameFile& file, int mode_count, int buckling_c
     results.cases.push_back(std::move(one));
   }
   note_missing_moduli(results, file.frame);
-  if (buckling_count > 0 && !file.cases.empty()) add_buckling(results, file.frame, loads, buckling_count);
+  if (buckling_count > 0 && !file.cases.empty()) add_buckling(results, file, loads, buckling_count);
   if (mode_count > 0) add_modes(results, file, mode_count);
   return results;
 }

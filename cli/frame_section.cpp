@@ -6,6 +6,7 @@
 
 #include "cli/nearest.h"
 #include "cli/quantity.h"
+#include "fem/section_profiles.h"
 
 namespace focalframe::cli {
 namespace {
@@ -47,8 +48,9 @@ bool read_sizes(const FrameElementReader& element, const ShapeWords& shape, Valu
     } else if (element.has(word.name)) {
       const auto value = element.number(word.name);
       good = good && value.has_value();
-      if (value && *value <= 0) {
-        element.say(word.name, "This must be more than 0.");
+      const bool radius = word.name.ends_with("radius");  // 0 is a sharp corner
+      if (value && (*value < 0 || (*value == 0 && !radius))) {
+        element.say(word.name, radius ? "This must be 0 or more." : "This must be more than 0.");
         good = false;
       }
       values[word.name] = value.value_or(0);
@@ -76,12 +78,25 @@ bool wall_fits(const FrameElementReader& element, Values& v) {
   return false;
 }
 
-fem::Section made(const std::string& shape, Values& v) {
+// `tilt`: from the legs of an angle to its principal axes.
+fem::Section made(const std::string& shape, Values& v, double& tilt) {
+  const auto radius = [&](const char* word) { return v.count(word) ? v[word] : -1.0; };
   if (shape == "round-tube") return fem::round_tube({v["outside-diameter"], v["wall"]});
-  if (shape == "square-tube") return fem::rectangular_tube({v["side"], v["side"], v["wall"]});
-  if (shape == "rectangular-tube") return fem::rectangular_tube({v["depth"], v["width"], v["wall"]});
+  if (shape == "square-tube")
+    return fem::rectangular_tube(
+        {v["side"], v["side"], v["wall"], radius("outer-radius"), radius("inner-radius")});
+  if (shape == "rectangular-tube")
+    return fem::rectangular_tube(
+        {v["depth"], v["width"], v["wall"], radius("outer-radius"), radius("inner-radius")});
   if (shape == "round-bar") return fem::round_bar({v["outside-diameter"]});
   if (shape == "flat") return fem::flat({v["depth"], v["thickness"]});
+  if (shape == "angle") {
+    const fem::AngleSection angle =
+        fem::angle({v["depth"], v["width"], v["thickness"], v["root-radius"], v["toe-radius"]});
+    tilt = angle.tilt;
+    return angle.section;
+  }
+  if (shape == "channel") return fem::channel({v["depth"], v["width"], v["web"], v["flange"]}).section;
   fem::Section section;
   section.A = v["area"];
   section.Iy = v["Iy"];
@@ -91,24 +106,38 @@ fem::Section made(const std::string& shape, Values& v) {
   section.shear_area_z = v["shear-area-z"];
   section.Wy = v["Wy"];
   section.Wz = v["Wz"];
+  section.Wt = v["Wt"];
+  section.peak_shear_y = v["peak-shear-y"];
+  section.peak_shear_z = v["peak-shear-z"];
   return section;
 }
 
 }  // namespace
 
-fem::Section frame_section(const FrameElementReader& element) {
-  fem::Section section;
+FrameSection frame_section(const FrameElementReader& element) {
+  FrameSection result;
+  fem::Section& section = result.section;
   Values values;
   const ShapeWords* shape = shape_of(element);
   if (shape && read_sizes(element, *shape, values) && wall_fits(element, values)) {
     try {
-      section = made(shape->shape, values);
+      section = made(shape->shape, values, result.tilt);
     } catch (const std::invalid_argument& error) {
       element.say("", std::string("These sizes do not make a section: ") + error.what() + ".");
     }
+    const bool properties = shape->shape == "properties";
+    if (element.has("round") && !properties)
+      element.say("round", "Only a section of shape properties says whether it is round.");
+    else if (element.has("round"))
+      section.round = element.word("round", {"yes", "no"}) == "yes";
+    if (shape->shape == "angle" || shape->shape == "channel")
+      element.say("",
+                  "An open section: weak in torsion, and its shear centre does not lie on the member's "
+                  "axis through the centroid. Warping is left out, which is on the safe side for twist.",
+                  Level::note);
   }
   section.name = element.text("id");
-  return section;
+  return result;
 }
 
 }  // namespace focalframe::cli

@@ -5,7 +5,12 @@
 
 namespace focalframe::cli {
 
+struct FrameSection {
+  fem::Section section;  ///< principal axes
+  double tilt = 0;       ///< of the principal axes against `up`, see fem/section_profiles.h [rad]
+};
+
 /// Section of a <section> element; what is wrong has been said when values are missing or impossible.
-fem::Section frame_section(const FrameElementReader& element);
+FrameSection frame_section(const FrameElementReader& element);
 
 }  // namespace focalframe::cli

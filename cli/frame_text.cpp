@@ -7,6 +7,7 @@
 
 #include "cli/messages.h"
 #include "cli/quantity.h"
+#include "fem/shape_parts.h"
 
 namespace focalframe::cli {
 namespace {
@@ -131,12 +132,58 @@ std::string stress_line(const FrameFile& file, const FrameCase& one) {
   return result;
 }
 
+std::string second_order_line(const FrameCase& one) {
+  const FrameSecondOrder& bent = one.second_order;
+  if (!bent.asked) return "";
+  if (!bent.stable)
+    return "  " + padded("second order", 22) + "NOT STABLE: no equilibrium in the bent shape\n";
+  std::string result = "  " + padded("second order", 22) + "largest displacement " +
+                       quantity_text(bent.second, Quantity::length) + " instead of " +
+                       quantity_text(bent.first, Quantity::length);
+  if (bent.first > 0) result += " (" + number(100 * (bent.second / bent.first - 1), 0, "%+*.3g") + " %)";
+  result += "\n";
+  if (!std::isnan(bent.stress))
+    result += "  " + padded("", 22) + "extreme stress " + quantity_text(bent.stress, Quantity::pressure) +
+              (bent.used > 0 ? ", " + number_text(std::round(bent.used * 1000) / 10) + " % of yield" : "") +
+              (bent.used > 1 ? ", YIELDS" : "") + "\n";
+  return result;
+}
+
 std::string buckling_line(const FrameCase& one) {
-  if (one.buckling.empty()) return "";
-  std::string result = "  buckling at           ";
-  for (std::size_t i = 0; i < std::min<std::size_t>(5, one.buckling.size()); ++i)
-    result += (i > 0 ? ", " : "") + number_text(one.buckling[i].factor);
-  return result + " times these loads" + (one.buckling.front().factor < 1 ? ": IT BUCKLES" : "") + "\n";
+  const std::vector<fem::BucklingMode>& modes = one.buckling.modes;
+  if (modes.empty()) return "";
+  std::string result = "  " + padded("buckling at", 22);
+  for (std::size_t i = 0; i < std::min<std::size_t>(5, modes.size()); ++i)
+    result += (i > 0 ? ", " : "") + number_text(modes[i].factor);
+  return result + " times these loads" + (modes.front().factor < 1 ? ": IT BUCKLES" : "") + "\n" +
+         second_order_line(one);
+}
+
+// Percentages below any meaning are not dressed up with digits.
+std::string per_cent(double ratio) {
+  return ratio < 1e-5 ? "less than 0.001 %" : number(100 * ratio, 0, "%*.2g") + " %";
+}
+
+// How a list of modes or factors is known to be right: pieces, residuals, count.
+template <class Mode>
+std::string proof_of(const std::vector<Mode>& modes, int pieces, double error, const char* what,
+                     const char* unit) {
+  if (modes.empty()) return "";
+  double residual = 0;
+  for (const Mode& mode : modes) residual = std::max(residual, mode.residual);
+  const Mode& one = modes.front();
+  return wrapped("  proof: members divided into up to " + std::to_string(pieces) +
+                     " pieces inside (finer ones would lower the last value by about " + per_cent(error) +
+                     "); greatest residual " + number(residual, 0, "%*.1e") + "; a count of pivots finds " +
+                     std::to_string(one.counted) + " " + what + " below " + number_text(one.count_at) + unit +
+                     ", none is missing",
+                 2);
+}
+
+std::string shape_line(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
+  return wrapped("         " + fem::shape_words(frame, fem::shape_parts(frame, shape),
+                                                {"along x", "along y", "along z"}),
+                 9);
 }
 
 std::string remarks(const FrameResults& results) {
@@ -146,9 +193,7 @@ std::string remarks(const FrameResults& results) {
 }
 
 constexpr const char* caution =
-    "Linear elastic members and rigid joints; nothing is judged against a standard.\n"
-    "Buckling and higher frequencies take every member as one piece and come out too\n"
-    "high where it bows between its nodes: divide it (4 pieces bring it to 0.1 %).\n"
+    "Linear elastic members and joints; nothing is judged against a standard.\n"
     "A licensed engineer signs.\n";
 
 }  // namespace
@@ -162,32 +207,43 @@ std::string frame_text(const std::string& name, const std::string& hash, const F
     text += "  " + padded("proof", 22) + "residual " + number(one.response.residual, 0, "%*.1e") +
             ", balance of loads and reactions " + number(one.balance, 0, "%*.1e") + "\n";
   }
-  if (!results.modes.empty()) {
+  const std::vector<fem::Mode>& modes = results.modes.modes;
+  if (!modes.empty()) {
     text += "Frequencies             ";
-    for (std::size_t i = 0; i < std::min<std::size_t>(6, results.modes.size()); ++i)
-      text += (i > 0 ? ", " : "") + number_text(results.modes[i].frequency);
-    text += " Hz\n";
+    for (std::size_t i = 0; i < std::min<std::size_t>(6, modes.size()); ++i)
+      text += (i > 0 ? ", " : "") + number_text(modes[i].frequency);
+    text += " Hz (shapes: focalframe modes)\n";
   }
+  text += "Condition estimate " + number(results.condition_estimate, 0, "%*.1e") + ", smallest pivot " +
+          number(results.smallest_pivot_ratio, 0, "%*.1e") + " of its diagonal (a mechanism: below 1e-7)\n";
   return text + remarks(results) + caution;
 }
 
 std::string modes_text(const std::string& name, const std::string& hash, const FrameFile& file,
                        const FrameResults& results) {
   std::string text = title(name, hash, file, results);
-  if (!results.modes.empty())
+  const std::vector<fem::Mode>& modes = results.modes.modes;
+  if (!modes.empty())
     text += "  mode   frequency Hz   period s   effective mass, % of all, along x    y    z\n";
-  for (std::size_t i = 0; i < results.modes.size(); ++i) {
-    const fem::Mode& mode = results.modes[i];
+  for (std::size_t i = 0; i < modes.size(); ++i) {
+    const fem::Mode& mode = modes[i];
     text += number(static_cast<double>(i + 1), 6, "%*.0f") + number(mode.frequency, 15) +
             number(1 / mode.frequency, 11, "%*.4g") + std::string(33, ' ');
-    for (int d = 0; d < 3; ++d) text += number(100 * mode.effective_mass[d] / results.mass, 5, "%*.0f");
-    text += "\n";
+    for (int d = 0; d < 3; ++d)
+      text += number(results.mass > 0 ? 100 * mode.effective_mass[d] / results.mass : 0, 5, "%*.0f");
+    text += "\n" + shape_line(results.modes.divided.frame, mode.shape);
   }
+  text += proof_of(modes, results.modes.most_pieces, results.modes.error, "frequencies", " Hz");
   for (const FrameCase& one : results.cases) {
     if (file.cases.empty()) break;
-    text += "Case " + one.name + "\n" +
-            (one.buckling.empty() ? std::string("  does not buckle below 1e6 times these loads\n")
-                                  : buckling_line(one));
+    text += "Case " + one.name + "\n";
+    if (one.buckling.modes.empty()) text += "  does not buckle below 1e6 times these loads\n";
+    for (const fem::BucklingMode& mode : one.buckling.modes)
+      text += "  buckling at " + number_text(mode.factor) + " times these loads" +
+              (mode.factor < 1 ? ": IT BUCKLES" : "") + "\n" +
+              shape_line(one.buckling.divided.frame, mode.shape);
+    text += second_order_line(one) +
+            proof_of(one.buckling.modes, one.buckling.most_pieces, one.buckling.error, "factors", "");
   }
   return text + remarks(results);
 }

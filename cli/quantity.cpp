@@ -139,6 +139,12 @@ ParsedQuantity value_of(const Sum& sum, const std::string& text, Quantity quanti
       return missing_unit(text, quantity);
     const auto unit = term.unit.empty() ? std::optional<Unit>(Unit{}) : parse_unit(term.unit);
     if (!unit || unit->dimension != wanted) return wrong_unit(text, term.unit, quantity);
+    if (quantity == Quantity::temperature_change && unit->offset != 0) {
+      result.problem = "This is a difference of two temperatures, which is given in K.";
+      const double kelvin = (sum.negative ? -1 : 1) * term.number * unit->factor;
+      result.suggestions = {number_text(kelvin) + " K"};
+      return result;
+    }
     const bool summand = sum.terms.size() > 1;
     if (summand && (unit->offset != 0 || (last_factor > 0 && unit->factor >= last_factor))) {
       result.problem =

@@ -229,7 +229,7 @@ std::vector<std::string> repaired(const std::string& unit, Quantity quantity) {
 
 // What a unit of another kind measures, for "kg is a mass".
 std::string kind_of(const Dimension& dimension) {
-  for (int i = static_cast<int>(Quantity::length); i <= static_cast<int>(Quantity::expansion); ++i)
+  for (int i = static_cast<int>(Quantity::length); i <= static_cast<int>(Quantity::mass_moment); ++i)
     if (dimension_of(static_cast<Quantity>(i)) == dimension) {
       std::string name = quantity_name(static_cast<Quantity>(i));
       name[0] = static_cast<char>(std::tolower(static_cast<unsigned char>(name[0])));

@@ -32,7 +32,10 @@ const Words& words_of(Quantity quantity) {
       section_modulus{"A section modulus", {3, 0, 0, 0, 0}, {"mm3", "cm3", "m3", "in3"}},
       line_load{"A load per length", {0, 1, -2, 0, 0}, {"N/m", "kN/m", "N/mm", "lbf/ft"}},
       acceleration{"An acceleration", {1, 0, -2, 0, 0}, {"m/s2", "ft/s2"}},
-      expansion{"An expansion coefficient", {0, 0, 0, -1, 0}, {"1/K"}};
+      expansion{"An expansion coefficient", {0, 0, 0, -1, 0}, {"1/K"}},
+      temperature_change{"A change of temperature", {0, 0, 0, 1, 0}, {"K"}},
+      temperature_gradient{"A change of temperature per length", {-1, 0, 0, 1, 0}, {"K/m", "K/mm"}},
+      mass_moment{"A moment of inertia", {2, 1, 0, 0, 0}, {"kg m2", "kg mm2"}};
   switch (quantity) {
     case Quantity::none:
       return none;
@@ -82,6 +85,12 @@ const Words& words_of(Quantity quantity) {
       return acceleration;
     case Quantity::expansion:
       return expansion;
+    case Quantity::temperature_change:
+      return temperature_change;
+    case Quantity::temperature_gradient:
+      return temperature_gradient;
+    case Quantity::mass_moment:
+      return mass_moment;
   }
   return none;
 }

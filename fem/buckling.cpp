@@ -64,6 +64,8 @@ std::vector<BucklingMode> buckling_modes(const Frame& frame, const LoadCase& loa
     const double moved = mode.shape.leftCols<3>().cwiseAbs().maxCoeff(&row, &col);
     const double turned = mode.shape.rightCols<3>().cwiseAbs().maxCoeff();
     mode.shape /= moved > 1e-9 * turned ? mode.shape(row, col) : turned;
+    mode.count_at = 1 / pairs.place;
+    mode.counted = pairs.counted;
     modes.push_back(mode);
   }
   return modes;

@@ -15,6 +15,9 @@ struct BucklingMode {
   double factor = std::numeric_limits<double>::quiet_NaN();    ///< on the loads of the case [-]
   Eigen::MatrixXd shape;                                       ///< #nodes x 6, greatest displacement 1
   double residual = std::numeric_limits<double>::quiet_NaN();  ///< |K x + factor KG x| / |K x| [-]
+  /// The count that proves the whole result complete: `counted` factors lie below `count_at`.
+  double count_at = std::numeric_limits<double>::quiet_NaN();
+  int counted = 0;
 };
 
 /// The lowest `count` positive load factors, ascending; fewer (or none) when no more lie below

@@ -41,27 +41,29 @@ class DeflatedOperator {
 EigenPairs dense_pairs(const SparseMatrix& A, const SparseMatrix& B) {
   const Eigen::GeneralizedSelfAdjointEigenSolver<Eigen::MatrixXd> solver(Eigen::MatrixXd{A},
                                                                          Eigen::MatrixXd{B});
-  return {solver.eigenvalues().reverse(), solver.eigenvectors().rowwise().reverse()};
+  return {solver.eigenvalues().reverse(), solver.eigenvectors().rowwise().reverse(), 0, 0};
 }
 
 /// Adds up to `wanted` further pairs in the standard form's own vectors; false when nothing converged.
 bool add_pairs(const SparseMatrix& A, const Factor& factor, int wanted, EigenPairs& known) {
   const Index n = A.rows();
   const Index ask = std::min<Index>(wanted, n - 1);
-  const Index space = std::min<Index>(n, std::max<Index>(3 * ask, ask + 20));
+  // A wide space: frames of many equal parts have clusters of nearly equal values.
+  const Index space = std::min<Index>(n, std::max<Index>(3 * ask, ask + 70));
   DeflatedOperator op(A, factor, known);
   Spectra::SymEigsSolver<DeflatedOperator> solver(op, ask, space);
   solver.init();
   const Index found =
       solver.compute(Spectra::SortRule::LargestAlge, 1000, 1e-11, Spectra::SortRule::LargestAlge);
   if (found == 0) return false;
-  EigenPairs all{Eigen::VectorXd(known.value.size() + found), Eigen::MatrixXd(n, known.value.size() + found)};
+  EigenPairs all{Eigen::VectorXd(known.value.size() + found), Eigen::MatrixXd(n, known.value.size() + found),
+                 0, 0};
   all.value << known.value, solver.eigenvalues();
   all.vector << known.vector, solver.eigenvectors();
   std::vector<Index> order(static_cast<std::size_t>(all.value.size()));
   std::iota(order.begin(), order.end(), Index{0});
   std::stable_sort(order.begin(), order.end(), [&](Index a, Index b) { return all.value(a) > all.value(b); });
-  known = {all.value(order), all.vector(Eigen::all, order)};
+  known = {all.value(order), all.vector(Eigen::all, order), 0, 0};
   return true;
 }
 
@@ -100,7 +102,7 @@ double place_below(const Eigen::VectorXd& value, Index last, double floor) {
 EigenPairs greatest_pairs(const SparseMatrix& A, const SparseMatrix& B, const Factor& factor_of_B,
                           const std::vector<int>& group, int count, double floor) {
   const Index n = A.rows();
-  EigenPairs known{Eigen::VectorXd(0), Eigen::MatrixXd(n, 0)};
+  EigenPairs known{Eigen::VectorXd(0), Eigen::MatrixXd(n, 0), 0, 0};
   if (n == 0 || count <= 0 || A.squaredNorm() == 0) return known;
   const bool dense = n <= dense_limit;
   if (dense) known = dense_pairs(A, B);
@@ -119,7 +121,7 @@ EigenPairs greatest_pairs(const SparseMatrix& A, const SparseMatrix& B, const Fa
     const int present = count_above(A, B, group, place);
     if (present <= found) {
       const Index kept = std::min<Index>(count, taken);
-      EigenPairs result{known.value.head(kept), known.vector.leftCols(kept)};
+      EigenPairs result{known.value.head(kept), known.vector.leftCols(kept), place, present};
       if (!dense)
         for (Index k = 0; k < kept; ++k)
           result.vector.col(k) = factor_of_B.upper_inverse(known.vector.col(k));

@@ -9,6 +9,8 @@ namespace focalframe::fem {
 struct EigenPairs {
   Eigen::VectorXd value;   ///< descending
   Eigen::MatrixXd vector;  ///< columns, x^T B x = 1
+  double place = 0;        ///< where the count of pivots was made
+  int counted = 0;         ///< values above `place` by that count: what the search found there
 };
 
 /// The `count` greatest values above `floor` > 0 (fewer when there are fewer). A count of negative pivots of

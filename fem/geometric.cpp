@@ -33,6 +33,39 @@ Mat3 arm_hessian(const Vec3& force, const Vec3& arm) {
   return (force * arm.transpose() + arm * force.transpose()) / 2 - force.dot(arm) * Mat3::Identity();
 }
 
+Mat3 cross_matrix(const Vec3& v) {
+  Mat3 m;
+  m << 0, -v.z(), v.y(), v.z(), 0, -v.x(), -v.y(), v.x(), 0;
+  return m;
+}
+
+/// Hessian of -M . (theta_A x theta_B) / 2 - F . (theta_mean x (u_B - u_A)) over the freedoms of sides A and
+/// B of a connection that puts force F and moment M on A.
+Mat12 connection_hessian(const Vec3& force, const Vec3& moment) {
+  Mat12 K = Mat12::Zero();
+  K.block<3, 3>(3, 9) = cross_matrix(moment) / 2;
+  for (const int turn : {3, 9}) {
+    K.block<3, 3>(turn, 6) += cross_matrix(force) / 2;
+    K.block<3, 3>(turn, 0) -= cross_matrix(force) / 2;
+  }
+  return K + K.transpose();
+}
+
+/// The connections between the outer and the inner side of a member's ends.
+Mat12 soft_ends(const Element& e, const Vec12& end_force) {
+  const Mat12 inner = e.inner();
+  Mat12 K = Mat12::Zero();
+  for (const int first : {0, 6}) {
+    Eigen::Matrix<double, 12, 12> sides = Mat12::Zero();  // outer, inner motion of this end per outer motions
+    sides.block<6, 6>(0, first) = Eigen::Matrix<double, 6, 6>::Identity();
+    sides.bottomRows<6>() = inner.middleRows<6>(first);
+    // The force on the outer side is the opposite of that on the member.
+    K += sides.transpose() *
+         connection_hessian(-end_force.segment<3>(first), -end_force.segment<3>(first + 3)) * sides;
+  }
+  return K;
+}
+
 }  // namespace
 
 Mat12 inner_geometric_stiffness(const Frame& frame, const LoadCase& load, const Response& response,
@@ -51,7 +84,8 @@ Mat12 inner_geometric_stiffness(const Frame& frame, const LoadCase& load, const 
                           resultants_at(frame, load, response, member, xi), polar_radius_2);
     }
   }
-  return e.soft ? Mat12(e.inner().transpose() * K * e.inner()) : K;
+  if (!e.soft) return K;
+  return e.inner().transpose() * K * e.inner() + soft_ends(e, response.end_force.row(member).transpose());
 }
 
 Mat12 geometric_stiffness(const Frame& frame, const LoadCase& load, const Response& response, int member) {
@@ -71,14 +105,23 @@ SparseMatrix assemble_geometric_stiffness(const Frame& frame, const LoadCase& lo
     for (int i = 0; i < 3; ++i)
       for (int j = 0; j < 3; ++j) triplets.emplace_back(6 * node + 3 + i, 6 * node + 3 + j, block(i, j));
   };
+  const auto add = [&](int node, int other, const Mat12& K) {
+    const auto freedom = [&](int k) { return k < 6 ? 6 * node + k : 6 * other + k - 6; };
+    for (int i = 0; i < 12; ++i)
+      for (int j = 0; j < 12; ++j)
+        if (K(i, j) != 0) triplets.emplace_back(freedom(i), freedom(j), K(i, j));
+  };
   const std::vector<LoadCase> own = loads_by_member(frame, load);
   for (int m = 0; m < static_cast<int>(frame.members.size()); ++m) {
     const Mat12 K = geometric_stiffness(frame, own[static_cast<std::size_t>(m)], response, m);
     const Member& member = frame.members[static_cast<std::size_t>(m)];
-    const auto freedom = [&](int k) { return k < 6 ? 6 * member.from + k : 6 * member.to + k - 6; };
-    for (int i = 0; i < 12; ++i)
-      for (int j = 0; j < 12; ++j)
-        if (K(i, j) != 0) triplets.emplace_back(freedom(i), freedom(j), K(i, j));
+    add(member.from, member.to, K);
+  }
+  for (std::size_t i = 0; i < frame.joints.size(); ++i) {
+    const Joint& joint = frame.joints[i];
+    const Vec6 on_node = response.joint_force.row(static_cast<Eigen::Index>(i)).transpose();
+    add(joint.node, joint.other,
+        connection_hessian(joint.axes * on_node.head<3>(), joint.axes * on_node.tail<3>()));
   }
   for (const PointMass& p : frame.masses)
     if (!p.offset.isZero(0)) add_rotation(p.node, arm_hessian(-p.mass * load.gravity, p.offset));
@@ -87,7 +130,12 @@ SparseMatrix assemble_geometric_stiffness(const Frame& frame, const LoadCase& lo
     if (s.other < 0) continue;
     const Vec3 arm =
         frame.nodes[static_cast<std::size_t>(s.other)].at - frame.nodes[static_cast<std::size_t>(s.node)].at;
-    const Vec3 force = s.axes * response.spring_force.row(static_cast<Eigen::Index>(i)).head<3>().transpose();
+    const Vec6 on_node = response.spring_force.row(static_cast<Eigen::Index>(i)).transpose();
+    const Vec3 force = s.axes * on_node.head<3>(), moment = s.axes * on_node.tail<3>();
+    // The arm belongs to the node's side, so the spring sits at the other node's place.
+    Mat12 sides = Mat12::Identity();
+    sides.block<3, 3>(0, 3) = -cross_matrix(arm);
+    add(s.node, s.other, sides.transpose() * connection_hessian(force, moment) * sides);
     if (!arm.isZero(0)) add_rotation(s.node, arm_hessian(-force, arm));
   }
   SparseMatrix K(frame.freedoms(), frame.freedoms());

@@ -8,7 +8,12 @@
 /// so that axial force, both moments, torsion and shear all take part and moments of members that meet at an
 /// angle stay consistent. The part of N is written N (v'^2 + w'^2) / 2 (Engesser's choice for the shear
 /// angle) with N (Iy + Iz) / (2 A) theta_x'^2 added for the fibres off the axis. Applied moments are
-/// semitangential. Moments carried through hinges and releases keep the axes of the undeformed frame.
+/// semitangential.
+///
+/// What passes through a joint, spring, release or end spring turns with it: a held or sprung rotation is a
+/// component of the relative rotation theta_B - theta_A - theta_A x theta_B / 2 of the two sides A and B in
+/// their own axes (exact to second order), a held displacement one of u_B - u_A in axes that turn with the
+/// mean of both sides.
 
 #include "fem/beam.h"
 #include "fem/statics.h"

@@ -2,11 +2,12 @@
 
 #include <Eigen/Dense>
 #include <algorithm>
+#include <array>
 #include <cmath>
 #include <limits>
 
 #include "fem/beam.h"
-#include "fem/mechanism.h"
+#include "fem/near_mechanism.h"
 #include "fem/text.h"
 
 namespace focalframe::fem {
@@ -87,8 +88,13 @@ bool has_release(const Member& m) {
   return any(m.release_from) || any(m.release_to);
 }
 
-/// Up to three releases and joints whose nodes take part in the motion.
-std::string suspects(const Frame& frame, const Eigen::MatrixXd& motion) {
+bool has_spring(const Member& m) {
+  const auto any = [](const std::array<double, 6>& k) { return *std::max_element(k.begin(), k.end()) > 0; };
+  return any(m.spring_from) || any(m.spring_to);
+}
+
+/// Up to three releases and joints (`soft`: springs too) whose nodes take part in the motion.
+std::string suspects(const Frame& frame, const Eigen::MatrixXd& motion, bool soft) {
   const double limit = 1e-3 * motion.cwiseAbs().maxCoeff();
   const auto moves = [&](int node) { return motion.row(node).cwiseAbs().maxCoeff() > limit; };
   std::string list;
@@ -98,8 +104,13 @@ std::string suspects(const Frame& frame, const Eigen::MatrixXd& motion) {
   };
   for (const Joint& j : frame.joints)
     if (moves(j.node) || moves(j.other)) add("joint '" + j.name + "'");
+  if (soft)
+    for (const Spring& s : frame.springs)
+      if (moves(s.node) || (s.other >= 0 && moves(s.other))) add("the stiffness of '" + s.name + "'");
   for (int m = 0; m < static_cast<int>(frame.members.size()); ++m) {
     const Member& member = frame.members[static_cast<std::size_t>(m)];
+    if (soft && has_spring(member) && (moves(member.from) || moves(member.to)))
+      add("the end springs of " + member_words(frame, m));
     if (has_release(member) && (moves(member.from) || moves(member.to)))
       add("the releases of " + member_words(frame, m));
   }
@@ -116,13 +127,16 @@ bool held_at_all(const Frame& frame) {
 }
 
 std::string likely_cause(const Frame& frame, const Eigen::VectorXd& full, const Eigen::MatrixXd& motion,
-                         int dof) {
-  if (is_rigid(frame, full)) {
+                         int dof, bool soft) {
+  const std::string who = suspects(frame, motion, soft);
+  if (is_rigid(frame, full) && !(soft && !who.empty())) {
     if (!held_at_all(frame)) return "nothing holds the frame: it has no support and no spring to ground";
     return std::string("the supports let the whole frame move; hold ") + dof_name(dof) +
            " (or what stops this motion) at one more node";
   }
-  const std::string who = suspects(frame, motion);
+  if (soft)
+    return who.empty() ? std::string("members that are very slender for their length")
+                       : "very soft beside its neighbours; look at " + who;
   const double limit = 1e-3 * motion.cwiseAbs().maxCoeff();
   const auto moving = (motion.cwiseAbs().rowwise().maxCoeff().array() > limit).count();
   if (moving == 1)
@@ -132,7 +146,8 @@ std::string likely_cause(const Frame& frame, const Eigen::VectorXd& full, const 
                      : "a part of the frame moves by itself; look at " + who;
 }
 
-[[noreturn]] void throw_mechanism(const Frame& frame, const Eigen::VectorXd& full, double ratio) {
+// `soft`: it moves with hardly any resistance instead of none.
+Mechanism describe(const Frame& frame, const Eigen::VectorXd& full, double ratio, bool soft) {
   const Eigen::MatrixXd motion = node_motions(frame, full);
   Index node = 0, dof = 0;
   // A hair of preference for the first of several equal motions, so that round-off does not choose.
@@ -141,10 +156,14 @@ std::string likely_cause(const Frame& frame, const Eigen::VectorXd& full, const 
     for (Index d = 6; d-- > 0;)
       if (std::abs(motion(i, d)) > largest * (1 - 1e-6)) node = i, dof = d;
   const auto n = static_cast<int>(node), d = static_cast<int>(dof);
-  throw Mechanism(n, d, ratio,
-                  "the frame can move without resistance: " + node_words(frame, n) + " moves most, it " +
-                      dof_words(d) + " (" + dof_name(d) +
-                      "). Likely cause: " + likely_cause(frame, full, motion, d) + ".");
+  return Mechanism(n, d, ratio,
+                   std::string("the frame can move ") + (soft ? "with hardly any" : "without") +
+                       " resistance: " + node_words(frame, n) + " moves most, it " + dof_words(d) + " (" +
+                       dof_name(d) + "). Likely cause: " + likely_cause(frame, full, motion, d, soft) + ".");
+}
+
+[[noreturn]] void throw_mechanism(const Frame& frame, const Eigen::VectorXd& full, double ratio) {
+  throw describe(frame, full, ratio, false);
 }
 
 }  // namespace
@@ -167,6 +186,20 @@ double require_no_mechanism(const Frame& frame, const SparseMatrix& matrix, cons
       frame,
       map * (softest.motion.size() > 0 ? softest.motion : Eigen::VectorXd(Eigen::VectorXd::Unit(n, at))),
       ratio);
+}
+
+std::optional<Mechanism> near_mechanism(const Frame& frame) {
+  const FreedomMap map = freedom_map(frame);
+  const SparseMatrix matrix = map.map.transpose() * assemble_stiffness(frame) * map.map;
+  std::vector<int> group;
+  for (const int f : map.kept) group.push_back(f / 6);
+  const Factor factor(matrix, group);
+  if (matrix.rows() == 0 || !factor.ok()) return std::nullopt;
+  const double ratio = factor.pivots().cwiseQuotient(matrix.diagonal()).minCoeff();
+  if (ratio >= suspicious_ratio) return std::nullopt;
+  const Softest softest = softest_motion(matrix, group);
+  if (softest.motion.size() == 0) return std::nullopt;
+  return describe(frame, map.map * softest.motion, ratio, true);
 }
 
 }  // namespace focalframe::fem

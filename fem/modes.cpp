@@ -78,6 +78,8 @@ std::vector<Mode> natural_modes(const Frame& frame, int count) {
     mode.modal_mass = x.dot(M_full * x);
     mode.effective_mass = effective_mass(M_full, x, mode.modal_mass);
     mode.residual = (K * reduced - omega_2 * inertia).norm() / (raised * inertia.norm());
+    mode.count_at = std::sqrt(std::max(0.0, 1 / pairs.place - shift)) / (2 * std::numbers::pi);
+    mode.counted = pairs.counted;
     modes.push_back(mode);
   }
   return modes;

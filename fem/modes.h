@@ -16,6 +16,9 @@ struct Mode {
   Vec3 effective_mass = Vec3::Constant(std::numeric_limits<double>::quiet_NaN());  ///< along x, y, z [kg]
   double residual =
       std::numeric_limits<double>::quiet_NaN();  ///< |K x - omega^2 M x| / |(omega^2 + s) M x| [-]
+  /// The count that proves the whole result complete: `counted` frequencies lie below `count_at` [Hz].
+  double count_at = std::numeric_limits<double>::quiet_NaN();
+  int counted = 0;
 };
 
 /// The lowest `count` modes, ascending; fewer when the frame has fewer freedoms with mass. Frames that move

@@ -42,6 +42,42 @@ struct Moments {
   }
 };
 
+struct Point {
+  double y = 0, z = 0;
+};
+
+/// Shear area over area of a thin open section of one stroke: I^2 / int (Q^2 / t) ds over int t ds, Q the
+/// first moment of what lies before (shear-flow theory). Exact: Q is quadratic in s along a straight part.
+template <std::size_t parts>
+double shear_flow_ratio(const std::array<Point, parts + 1>& corner, const std::array<double, parts>& wall,
+                        const Point& across) {
+  std::array<double, parts> length{}, start{}, slope{};  // of the distance along `across`, per part
+  double area = 0, first = 0, second = 0;
+  for (std::size_t i = 0; i < parts; ++i) {
+    const Point &a = corner[i], &b = corner[i + 1];
+    length[i] = std::hypot(b.y - a.y, b.z - a.z);
+    start[i] = a.y * across.y + a.z * across.z;
+    slope[i] = ((b.y - a.y) * across.y + (b.z - a.z) * across.z) / length[i];
+    const double middle = start[i] + slope[i] * length[i] / 2, own = wall[i] * length[i];
+    area += own;
+    first += own * middle;
+    second += own * (middle * middle + std::pow(slope[i] * length[i], 2) / 12);
+  }
+  const double centre = first / area, I = second - area * centre * centre;
+  double before = 0, energy = 0;
+  for (std::size_t i = 0; i < parts; ++i) {
+    const auto Q = [&](double s) { return before + wall[i] * s * (start[i] - centre + slope[i] * s / 2); };
+    // Gauss, three points: exact for the quartic Q^2.
+    const double reach = std::sqrt(0.6) / 2, L = length[i];
+    energy += L / wall[i] *
+              (5 * std::pow(Q(L * (0.5 - reach)), 2) + 8 * std::pow(Q(L / 2), 2) +
+               5 * std::pow(Q(L * (0.5 + reach)), 2)) /
+              18;
+    before = Q(L);
+  }
+  return I * I / energy / area;
+}
+
 void require_positive(double value, const char* what) {
   require(std::isfinite(value) && value > 0, std::string(what) + " " + number(value) + " m must be > 0");
 }
@@ -83,7 +119,10 @@ AngleSection angle(const Angle& size) {
   p.Iz = mean - radius;
   p.J = (a + b - t) * t * t * t / 3;
   p.Wt = p.J / t;
-  p.shear_area_y = p.shear_area_z = 5.0 / 12 * p.A;
+  const std::array<Point, 3> legs{{{0, a - t / 2}, {0, 0}, {b - t / 2, 0}}};
+  const double along = std::cos(s.tilt), aside = std::sin(s.tilt);
+  p.shear_area_y = p.A * shear_flow_ratio<2>(legs, {t, t}, {along, aside});
+  p.shear_area_z = p.A * shear_flow_ratio<2>(legs, {t, t}, {-aside, along});
   double reach_y = 0, reach_z = 0, low_y = 0, high_y = 0, low_z = 0, high_z = 0;
   const std::array<std::pair<double, double>, 5> corners{{{0, 0}, {0, a}, {t, a}, {b, 0}, {b, t}}};
   for (const auto& [y, z] : corners) {
@@ -126,8 +165,10 @@ ChannelSection channel(const Channel& size) {
   s.Iz = m.Iyy - m.A * c.centroid_y * c.centroid_y;
   s.J = ((h - 2 * tf) * tw * tw * tw + 2 * b * tf * tf * tf) / 3;
   s.Wt = s.J / std::max(tw, tf);
-  s.shear_area_z = h * tw;
-  s.shear_area_y = 5.0 / 3 * b * tf;
+  const double half = (h - tf) / 2, reach = b - tw / 2;
+  const std::array<Point, 4> line{{{reach, -half}, {0, -half}, {0, half}, {reach, half}}};
+  s.shear_area_y = s.A * shear_flow_ratio<3>(line, {tf, tw, tf}, {1, 0});
+  s.shear_area_z = s.A * shear_flow_ratio<3>(line, {tf, tw, tf}, {0, 1});
   s.Wy = s.Iy / (h / 2);
   s.Wz = s.Iz / std::max(c.centroid_y, b - c.centroid_y);
   s.depth_y = b;

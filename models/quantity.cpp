@@ -30,7 +30,8 @@ const std::vector<Unit>& units_of(Quantity quantity) {
       per_angle{{"1/rad", 1, 0}}, area{{"mm2", 1e-6, 0}, {"cm2", 1e-4, 1e-4}, {"m2", 1, 1}},
       area_moment{{"mm4", 1e-12, 0}, {"cm4", 1e-8, 1e-8}},
       section_modulus{{"mm3", 1e-9, 0}, {"cm3", 1e-6, 1e-6}}, line_load{{"N/m", 1, 0}, {"kN/m", 1e3, 1e3}},
-      acceleration{{"m/s2", 1, 0}}, expansion{{"1/K", 1, 0}};
+      acceleration{{"m/s2", 1, 0}}, expansion{{"1/K", 1, 0}}, temperature_change{{"K", 1, 0}},
+      temperature_gradient{{"K/m", 1, 0}}, mass_moment{{"kg m2", 1, 0}};
   switch (quantity) {
     case Quantity::none:
     case Quantity::count:
@@ -78,6 +79,12 @@ const std::vector<Unit>& units_of(Quantity quantity) {
       return acceleration;
     case Quantity::expansion:
       return expansion;
+    case Quantity::temperature_change:
+      return temperature_change;
+    case Quantity::temperature_gradient:
+      return temperature_gradient;
+    case Quantity::mass_moment:
+      return mass_moment;
   }
   return none;
 }

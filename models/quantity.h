@@ -23,14 +23,17 @@ enum class Quantity {
   speed,
   turning_rate,  ///< rad/s
   time,
-  temperature,      ///< absolute, K inside
-  per_angle,        ///< 1/rad
-  area,             ///< m2
-  area_moment,      ///< m4
-  section_modulus,  ///< m3
-  line_load,        ///< N/m
-  acceleration,     ///< m/s2
-  expansion,        ///< 1/K
+  temperature,           ///< absolute, K inside
+  per_angle,             ///< 1/rad
+  area,                  ///< m2
+  area_moment,           ///< m4
+  section_modulus,       ///< m3
+  line_load,             ///< N/m
+  acceleration,          ///< m/s2
+  expansion,             ///< 1/K
+  temperature_change,    ///< K, a difference
+  temperature_gradient,  ///< K/m
+  mass_moment,           ///< moment of inertia, kg m2
 };
 
 /// `value` (SI) in a unit of customary size, four significant digits: "69.85 mm", "2.4 m", "3.5 kN m".

@@ -3,14 +3,13 @@
 #include <cmath>
 #include <numbers>
 
-#include "fem/buckling.h"
-#include "fem/modes.h"
+#include "fem/inside.h"
+#include "fem/shape_parts.h"
 #include "fem/units.h"
-#include "loads/pose.h"
 #include "models/full_frame.h"
+#include "models/posed_row.h"
 #include "models/states.h"
 #include "models/trough.h"
-#include "models/wind_load.h"
 
 namespace focalframe::models {
 namespace {
@@ -18,54 +17,76 @@ namespace {
 // Buckling factors beyond this are of no interest: nothing is near its stability limit.
 constexpr double greatest_factor = 1000;
 
-// The node with the greatest displacement and its main direction, world axes.
-std::string most_moved(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
-  int node = 0;
-  for (int n = 1; n < shape.rows(); ++n)
-    if (shape.row(n).head<3>().norm() > shape.row(node).head<3>().norm()) node = n;
-  int axis = 0;
-  for (int a = 1; a < 3; ++a)
-    if (std::abs(shape(node, a)) > std::abs(shape(node, axis))) axis = a;
-  const char* ways[] = {"along the row", "across the row", "up and down"};
-  return frame.nodes[static_cast<std::size_t>(node)].name + ", " + ways[axis];
+// A row has thousands of members, most of them short: more pieces would cost time and change nothing.
+constexpr fem::InsideLimits limits{.error = 5e-3, .first_pieces = 1, .most_pieces = 8, .most_members = 20000};
+
+template <class Inside>
+StabilityProof proof_of(const Inside& inside) {
+  StabilityProof proof;
+  if (inside.modes.empty()) return proof;
+  proof.most_pieces = inside.most_pieces;
+  proof.error = inside.error;
+  proof.counted = inside.modes.front().counted;
+  proof.count_at = inside.modes.front().count_at;
+  return proof;
+}
+
+std::string words_of(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
+  return fem::shape_words(frame, fem::shape_parts(frame, shape),
+                          {"along the row", "across the row", "up and down"});
 }
 
 }  // namespace
 
 RowStability row_stability(const TroughDesign& design, const loads::CoefficientTable& table, double elevation,
-                           int count) {
+                           int count, int factors) {
   const RowModel row(build_trough(design), {});
   const FullFrame full = full_frame(row.collector(), elevation);
   RowStability out;
   out.elevation = elevation;
   out.freedoms = full.frame.freedoms();
-  for (const fem::Mode& mode : fem::natural_modes(full.frame, count))
-    out.modes.push_back({mode.frequency, mode.residual, most_moved(full.frame, mode.shape)});
+  const fem::InsideModes inside = fem::modes_inside(full.frame, count, limits);
+  for (const fem::Mode& mode : inside.modes)
+    out.modes.push_back({mode.frequency, mode.residual, words_of(inside.divided.frame, mode.shape)});
+  out.modes_proof = proof_of(inside);
 
   const StateWinds winds = winds_at_axis(design);
   if (!design.wind.stow.given) return out;
-  const loads::ZoneFactors zone = loads::zone_factors(design.wind.zone).value_or(loads::ZoneFactors{});
   for (double from : {0.0, std::numbers::pi}) {
-    const auto c = loads::coefficients_at(table, loads::pitch_seen_by_wind(elevation, from), true);
-    if (!c) continue;
-    WindOnRow wind;
-    wind.wind_from = from;
-    wind.coefficients = {c->Ca * zone.Ca, c->Cs * zone.Cs, c->Cm * zone.Cm};
-    wind.pressure = winds.stow.gust_pressure;
-    fem::LoadCase load;
-    load.gravity = {0, 0, -standard_gravity};
-    load.nodes =
-        in_world(full, row.nodal_loads(wind.pressure * wind_amplitudes(row, elevation, wind)), elevation);
+    auto load = wind_case(row, full, table, design, elevation, from, true, winds.stow.gust_pressure);
+    if (!load) continue;
+    load->gravity = {0, 0, -standard_gravity};
     std::vector<RowBuckling> found;
-    for (const fem::BucklingMode& mode : fem::buckling_modes(full.frame, load, 3, {}, greatest_factor))
-      found.push_back({mode.factor, mode.residual, most_moved(full.frame, mode.shape)});
+    const fem::InsideBuckling bows =
+        fem::buckling_inside(full.frame, *load, factors, greatest_factor, limits);
+    for (const fem::BucklingMode& mode : bows.modes)
+      found.push_back({mode.factor, mode.residual, words_of(bows.divided.frame, mode.shape)});
     const bool worse = !found.empty() && (out.buckling.empty() || found[0].factor < out.buckling[0].factor);
     if (worse || out.load.empty()) {
       out.load = "weight and the STOW gust from the " + std::string(from == 0 ? "+Y" : "-Y") + " side";
-      if (worse) out.buckling = found;
+      if (worse) out.buckling = found, out.buckling_proof = proof_of(bows);
     }
   }
   return out;
+}
+
+std::optional<Violation> stability_remark(const TroughDesign& design, const loads::CoefficientTable& table) {
+  if (!std::isfinite(design.operation.stow_at) || !design.wind.stow.given) return std::nullopt;
+  const RowStability s = row_stability(design, table, design.operation.stow_at, 0, 1);
+  if (s.buckling.empty() || s.buckling[0].factor >= 10) return std::nullopt;
+  const double factor = s.buckling[0].factor;
+  Violation v;
+  v.level = Violation::Level::warn;
+  v.element = "ribs";
+  v.head = "buckling in the stow pose";
+  v.text =
+      "Linear buckling at " + number_text(factor) + " times " + s.load + " (" + s.buckling[0].moves + "). ";
+  v.text += factor <= 1 ? "No criterion of this check judges that: it would buckle under the load itself."
+                        : "Second-order effects enlarge deflections by about " +
+                              number_text(std::round(100 / (factor - 1))) +
+                              " %; no criterion of this check has them.";
+  v.advice = "Tie what bows (purlins, thicker or shorter ribs), then: focalframe modes";
+  return v;
 }
 
 }  // namespace focalframe::models

@@ -3,18 +3,20 @@
 /// How a row swings and where it would buckle: the whole assembly in one pose, what turns and what stands
 /// together.
 
+#include <optional>
 #include <string>
 #include <vector>
 
 #include "loads/coefficients.h"
 #include "models/design.h"
+#include "models/schema.h"
 
 namespace focalframe::models {
 
 struct RowMode {
   double frequency = not_given;  ///< [Hz]
   double residual = not_given;   ///< relative [-]
-  std::string moves;             ///< the place that moves most, in the builder's words, and how
+  std::string moves;             ///< what bends or twists, and what moves most, in the builder's words
 };
 
 struct RowBuckling {
@@ -23,18 +25,31 @@ struct RowBuckling {
   std::string moves;
 };
 
+/// How the values are known to be right: see fem/inside.h and fem/modes.h.
+struct StabilityProof {
+  int most_pieces = 0;          ///< of any member; 0 = nothing was found
+  double error = not_given;     ///< estimate for the last value [-]
+  int counted = 0;              ///< values below count_at, by a count of negative pivots
+  double count_at = not_given;  ///< [Hz] or factor
+};
+
 struct RowStability {
   double elevation = not_given;  ///< [rad]
   int freedoms = 0;
   std::vector<RowMode> modes;
+  StabilityProof modes_proof, buckling_proof;
   std::string load;  ///< what the buckling factors multiply, in words; empty = no wind was stated
   std::vector<RowBuckling> buckling;  ///< ascending; empty = none below 1000
 };
 
-/// Frequencies in one pose, and buckling factors under weight and the 3 s gust of the STOW wind (upper
-/// coefficients, both winds, the worse), straight-line pattern. Ends of ribs, purlins and posts buckle
-/// between their nodes only as finely as the ribs are divided.
+/// `count` frequencies in one pose (0: none), and buckling factors under weight and the 3 s gust of the STOW
+/// wind (upper coefficients, both winds, the worse), straight-line pattern. Members are divided inside where
+/// they bow between their nodes.
 RowStability row_stability(const TroughDesign& design, const loads::CoefficientTable& table, double elevation,
-                           int count);
+                           int count, int factors = 3);
+
+/// What to say beside a check when the buckling factor in the stow pose lies below 10: second-order effects
+/// are not in any criterion. None when there is no such pose or wind.
+std::optional<Violation> stability_remark(const TroughDesign& design, const loads::CoefficientTable& table);
 
 }  // namespace focalframe::models

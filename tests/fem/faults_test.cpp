@@ -1,4 +1,5 @@
 #include "fem/frame.h"
+#include "fem/near_mechanism.h"
 #include "fem/statics.h"
 #include "tests/fem/frames.h"
 
@@ -114,4 +115,33 @@ TEST_CASE("contradicting supports and joints are refused in words") {
   b.support(2, fix("y"), up);
   b.support(3, fix("y"), down);
   CHECK_THROWS_WITH(StaticSolver(b.frame), Contains("'weld'") && Contains("contradicts"));
+}
+
+TEST_CASE("a frame that is nearly a mechanism is told by node, direction and what is soft") {
+  Builder b = straight_beam(3, 3);
+  SECTION("a soft spring instead of a support") {
+    Vec6 k;
+    k << 1e7, 1e7, 1e7, 1e-3, 1e7, 1e7;
+    b.frame.springs.push_back({0, -1, k, Mat3::Identity(), "foot"});
+    b.support(3, fix("yz"));
+    CHECK(StaticSolver(b.frame).smallest_pivot_ratio() < 1e-7);
+    const auto near = near_mechanism(b.frame);
+    REQUIRE(near);
+    CHECK(near->dof == rx);
+    CHECK_THAT(near->what(), Contains("hardly any resistance") && Contains("turns about x") &&
+                                 Contains("the stiffness of 'foot'"));
+  }
+  SECTION("a soft end spring") {
+    b.support(0, all_fixed);
+    b.frame.members[1].spring_to = {0, 0, 0, 0, 1e-3, 0};
+    CHECK(StaticSolver(b.frame).smallest_pivot_ratio() < 1e-7);
+    const auto near = near_mechanism(b.frame);
+    REQUIRE(near);
+    CHECK(near->node == 2);
+    CHECK_THAT(near->what(), Contains("turns about y") && Contains("the end springs of member 'b1'"));
+  }
+  SECTION("a sound frame is none") {
+    b.support(0, all_fixed);
+    CHECK_FALSE(near_mechanism(b.frame));
+  }
 }

@@ -92,7 +92,9 @@ TEST_CASE("nodal wind loads are q A C in both forces and the moment, for every p
 }
 
 TEST_CASE("the condensed row moves as the whole frame does, in any pose", "[row]") {
-  const RowModel row(build_trough(support::small_row()), {});
+  TroughDesign design = support::small_row();
+  design.row.modules = GENERATE(1, 2, 4);
+  const RowModel row(build_trough(design), {});
   const Collector& c = row.collector();
   for (double elevation : {-90 * deg, 35 * deg, 140 * deg}) {
     const PoseModel pose = row.pose(elevation);
@@ -138,6 +140,22 @@ TEST_CASE("the condensed row moves as the whole frame does, in any pose", "[row]
       CHECK(tubes[static_cast<int>(m)] ==
             Approx(mean).epsilon(1e-7).margin(1e-12));  // face down: no twist at all
     }
+  }
+}
+
+TEST_CASE("a row whose modules are not coupled is a mechanism, told by place, direction and cause", "[row]") {
+  Collector loose = build_trough(support::small_row());
+  for (fem::Spring& s : loose.body.springs) s.stiffness[fem::rx] = 0;
+  try {
+    const RowModel row(loose, {});
+    FAIL("no mechanism reported");
+  } catch (const fem::Mechanism& m) {
+    const std::string text = m.what();
+    INFO(text);
+    CHECK(text.find("module") != std::string::npos);
+    CHECK(text.find("without resistance") != std::string::npos);
+    CHECK(text.find("Likely cause") != std::string::npos);
+    CHECK(m.pivot_ratio < 1e-7);
   }
 }
 

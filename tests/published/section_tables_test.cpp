@@ -1,6 +1,9 @@
 /// Published section tables: CHS and SHS hot finished (EN 10210-2), SHS and RHS cold formed (EN 10219-2),
 /// read from producers' tables of 3-4 digits; ASME B36.10 pipes. Each value is checked to its own last digit.
 
+#include <array>
+#include <numbers>
+
 #include "fem/section.h"
 #include "fem/section_profiles.h"
 #include "tests/fem/frames.h"
@@ -183,6 +186,95 @@ TEST_CASE("equal angles match the table of EN 10056-1") {
 // Thin estimate of an angle 100 x 100 x 10: (100 + 90) 10^3 / 3.
 TEST_CASE("B23: torsion constant of an angle") {
   CHECK(angle({.leg_z = 0.1, .leg_y = 0.1, .thickness = 0.01}).section.J == near(63333.3e-12));
+}
+
+// Roark's Formulas for Stress and Strain, torsion of an L section with a root fillet (from memory):
+// K1 + K2 + alpha D^4. The thin estimate leaves the fillet out and lies below.
+TEST_CASE("the torsion constant of rolled angles lies a little below Roark's, on the safe side") {
+  struct Row {
+    double leg, t, r;
+  };
+  const auto row = GENERATE(Row{50, 5, 7}, Row{80, 8, 10}, Row{100, 10, 12}, Row{150, 12, 16});
+  const double a = row.leg, t = row.t, c = a - t;
+  const double K1 = a * t * t * t * (1.0 / 3 - 0.21 * t / a * (1 - std::pow(t / a, 4) / 12)),
+               K2 = c * t * t * t * (1.0 / 3 - 0.105 * t / c * (1 - std::pow(t / c, 4) / 192)),
+               D = 2 * (2 * t + 3 * row.r - std::sqrt(2.0) * (2 * row.r + t)),
+               roark = K1 + K2 + (0.07 + 0.076 * row.r / t) * std::pow(D, 4);
+  const double thin =
+      angle({.leg_z = a * mm, .leg_y = a * mm, .thickness = t * mm, .root_radius = row.r * mm}).section.J /
+      std::pow(mm, 4);
+  CHECK(thin < roark);
+  CHECK(thin > 0.85 * roark);
+}
+
+// UPE 100 (h 100, b 55, tw 4.5, tf 7.5, root radius 10 mm; producers' tables, from memory): A 12.5 cm2, Iy
+// 207, Iz 38.2, It 2.01 cm4, centroid 1.91 cm from the web's back, shear centre 3.93 cm from the centroid.
+// Sharp corners leave the two fillets out: 0.43 cm2, 3 % of A and Iy, 10 % of It.
+TEST_CASE("a channel of sharp corners lies a little below the rolled one's table") {
+  const ChannelSection c =
+      channel({.depth_z = 100 * mm, .flange_y = 55 * mm, .web = 4.5 * mm, .flange = 7.5 * mm});
+  const double cm = 0.01;
+  CHECK(c.section.A / (cm * cm) + 2 * (1 - std::numbers::pi / 4) == rounded(12.5, 3));
+  CHECK(c.section.Iy / std::pow(cm, 4) == Approx(207).epsilon(0.05));
+  CHECK(c.section.Iy / std::pow(cm, 4) < 207);
+  CHECK(c.section.Iz / std::pow(cm, 4) == Approx(38.2).epsilon(0.03));
+  CHECK(c.section.J / std::pow(cm, 4) == Approx(2.01).epsilon(0.12));
+  CHECK(c.section.J / std::pow(cm, 4) < 2.01);
+  CHECK(c.centroid_y / cm == Approx(1.91).epsilon(0.03));
+  CHECK(-c.shear_centre_y / cm == Approx(3.93).epsilon(0.03));
+}
+
+namespace {
+
+// Shear area of a thin open section: I^2 / integral of Q^2 / t along its middle line, for a force along
+// `across`. `line`: corners of the middle line in one stroke; `t`: thickness of each straight part.
+double shear_flow_area(const std::vector<std::array<double, 2>>& line, const std::vector<double>& t,
+                       const std::array<double, 2>& across) {
+  constexpr int steps = 400;
+  const auto at = [&](std::size_t part, double s) {
+    return (line[part][0] + s * (line[part + 1][0] - line[part][0])) * across[0] +
+           (line[part][1] + s * (line[part + 1][1] - line[part][1])) * across[1];
+  };
+  double area = 0, first = 0;
+  const auto each = [&](const auto& visit) {
+    for (std::size_t part = 0; part < t.size(); ++part) {
+      const double length = std::hypot(line[part + 1][0] - line[part][0], line[part + 1][1] - line[part][1]);
+      for (int i = 0; i < steps; ++i) visit(at(part, (i + 0.5) / steps), t[part], length / steps);
+    }
+  };
+  each([&](double z, double wall, double ds) { area += wall * ds, first += z * wall * ds; });
+  const double centre = first / area;
+  double I = 0, Q = 0, energy = 0;
+  each([&](double z, double wall, double ds) {
+    I += (z - centre) * (z - centre) * wall * ds;
+    Q += (z - centre) * wall * ds;
+    energy += Q * Q / wall * ds;
+  });
+  return I * I / energy;
+}
+
+}  // namespace
+
+// Shear-flow theory of thin open sections (any text on strength of materials), integrated here.
+TEST_CASE("shear areas of angles and channels against the integral of their shear flow") {
+  const double root = std::sqrt(0.5);
+  const std::vector<std::array<double, 2>> legs{{0, 0.1}, {0, 0}, {0.1, 0}};
+  for (const double side : {root, -root})  // by hand: I = t a^3 / 12 and t a^3 / 3, both 5/12 A
+    CHECK(shear_flow_area(legs, {1e-3, 1e-3}, {root, side}) == Approx(5.0 / 12 * 2e-4).epsilon(2e-3));
+  const Section equal = angle({.leg_z = 0.1, .leg_y = 0.1, .thickness = 1e-2}).section;
+  CHECK(equal.shear_area_y == near(5.0 / 12 * equal.A));
+  CHECK(equal.shear_area_z == near(5.0 / 12 * equal.A));
+  const AngleSection a = angle({.leg_z = 0.1, .leg_y = 0.05, .thickness = 1e-3});
+  const std::vector<std::array<double, 2>> unequal{{0, 0.0995}, {0, 0}, {0.0495, 0}};
+  const double c = std::cos(a.tilt), d = std::sin(a.tilt);
+  CHECK(a.section.shear_area_y == Approx(shear_flow_area(unequal, {1e-3, 1e-3}, {c, d})).epsilon(5e-3));
+  CHECK(a.section.shear_area_z == Approx(shear_flow_area(unequal, {1e-3, 1e-3}, {-d, c})).epsilon(5e-3));
+  const double b = GENERATE(30.0, 55.0, 80.0) * mm, h = 100 * mm, tw = 0.5 * mm, tf = 0.8 * mm;
+  const Section s = channel({.depth_z = h, .flange_y = b, .web = tw, .flange = tf}).section;
+  const double half = (h - tf) / 2, reach = b - tw / 2;
+  const std::vector<std::array<double, 2>> line{{reach, -half}, {0, -half}, {0, half}, {reach, half}};
+  CHECK(s.shear_area_z == Approx(shear_flow_area(line, {tf, tw, tf}, {0, 1})).epsilon(5e-3));
+  CHECK(s.shear_area_y == Approx(shear_flow_area(line, {tf, tw, tf}, {1, 0})).epsilon(5e-3));
 }
 
 // ASME B36.10 pipes in inches (Mott, Machine Elements in Mechanical Design, 4th ed., table A16-6; UFC

@@ -1,6 +1,8 @@
 /// Torsion of bars and tubes: Bredt and St-Venant (any strength-of-materials text), Roark's and Timoshenko's
 /// coefficients for rectangles (recomputed by two-dimensional finite elements), and torque-tube arithmetic.
 
+#include <numbers>
+
 #include "fem/diagram.h"
 #include "fem/statics.h"
 #include "fem/units.h"
@@ -48,6 +50,22 @@ TEST_CASE("B20: a sharp-cornered box 200 x 100 x 6 by Bredt") {
                           .solve(node_force(1, Vec3::Zero(), {8e3, 0, 0}))
                           .displacement(1, rx);
   CHECK(turn == near(0.0285113, 4e-3));
+}
+
+// A tube slit along its length is a strip rolled up. Thin: J = 2 pi r t^3 / 3, closed over open 3 (r / t)^2.
+// 150 x 5 mm by a two-dimensional finite-element solution of St-Venant's problem (cubic elements, general
+// library, computed for this test): 18852.3 mm4 where the thin formula says 18980.5.
+TEST_CASE("B21: a slit tube twists as the strip it is rolled from") {
+  const double r = 72.5 * mm, t = 5 * mm;
+  const Section strip = flat({.depth_z = 2 * std::numbers::pi * r, .thickness_y = t});
+  CHECK(strip.J == near(18852.3e-12, 1e-3));
+  CHECK(strip.J == near(2 * std::numbers::pi * r * t * t * t / 3, 7.5e-3));
+  CHECK_FALSE(strip.closed);
+  const double mean = 105.55 * mm, wall = 8 * mm;
+  const Section slit = flat({.depth_z = 2 * std::numbers::pi * mean, .thickness_y = wall}),
+                closed = round_tube({.outside_diameter = 219.1 * mm, .wall = wall});
+  CHECK(slit.J == near(1.13184e-7, 8e-3));  // the slit's two ends lower it by 0.63 t / (2 pi r)
+  CHECK(closed.J / slit.J == near(522.975, 8e-3));
 }
 
 // J = beta a b^3 with b the shorter side. Published to three digits (Roark; a torsion table), recomputed to
