@@ -18,6 +18,7 @@
 #include "models/assess.h"
 #include "models/cures.h"
 #include "models/guesses.h"
+#include "models/row_modes.h"
 #include "models/wind_rules.h"
 
 namespace focalframe::cli {
@@ -93,7 +94,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
       models::deciding_guesses(design, table->table, a, progress_line("trying the guesses", options.quiet));
   a.cures = models::find_cures(design, table->table, a, progress_line("trying changes", options.quiet));
 
-  if (const auto bows = models::stability_remark(design, table->table)) a.remarks.push_back(*bows);
+  for (const models::Violation& v : models::frame_remarks(design, table->table)) a.remarks.push_back(v);
 
   for (const models::Violation& v : a.remarks) messages.push_back(message_of(v, lines, options.design_path));
   const std::string hash = input_hash(options.design_text, table->table.name);

@@ -60,6 +60,15 @@ Json buckling_json(const FrameCase& one) {
   return out;
 }
 
+Json extreme_json(const fem::Extreme& e) { return {{"at", e.at}, {"value", e.value}}; }
+
+Json extremes_json(const fem::Extremes& e) {
+  return {{"most_my_n_m", extreme_json(e.most_My)},        {"least_my_n_m", extreme_json(e.least_My)},
+          {"most_mz_n_m", extreme_json(e.most_Mz)},        {"least_mz_n_m", extreme_json(e.least_Mz)},
+          {"most_deflection_y_m", extreme_json(e.most_y)}, {"least_deflection_y_m", extreme_json(e.least_y)},
+          {"most_deflection_z_m", extreme_json(e.most_z)}, {"least_deflection_z_m", extreme_json(e.least_z)}};
+}
+
 Json case_json(const FrameFile& file, const FrameCase& one, const FrameResults& results) {
   Json nodes = Json::array(), reactions = Json::array(), members = Json::array(), frequencies = Json::array(),
        factors = Json::array();
@@ -75,6 +84,7 @@ Json case_json(const FrameFile& file, const FrameCase& one, const FrameResults& 
   for (std::size_t m = 0; m < file.frame.members.size(); ++m)
     members.push_back({{"id", file.frame.members[m].name},
                        {"end_force", row_of(one.response.end_force.row(static_cast<Eigen::Index>(m)))},
+                       {"extremes", extremes_json(one.extremes[m])},
                        {"greatest_stress_pa", one.stresses[m].stress},
                        {"greatest_stress_at", one.stresses[m].at}});
   for (const fem::Mode& mode : results.modes.modes) frequencies.push_back(mode.frequency);

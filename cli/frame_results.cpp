@@ -6,7 +6,6 @@
 #include <exception>
 
 #include "fem/assembly.h"
-#include "fem/diagram.h"
 #include "fem/member_loads.h"
 #include "fem/near_mechanism.h"
 
@@ -38,13 +37,12 @@ double balance_of(const fem::Frame& frame, const fem::LoadCase& load, const fem:
 }
 
 MemberStress stress_of(const fem::Frame& frame, const fem::LoadCase& load, const fem::Response& response,
-                       int member) {
+                       int member, const fem::Extremes& extremes) {
   const fem::Section& section =
       frame.sections[static_cast<std::size_t>(frame.members[static_cast<std::size_t>(member)].section)];
   MemberStress worst;
   if (!(section.Wy > 0 && section.Wz > 0)) return worst;
   std::vector<double> places(std::begin(stations), std::end(stations));
-  const fem::Extremes extremes = fem::extremes(frame, load, response, member);
   for (const fem::Extreme& e : {extremes.most_My, extremes.least_My, extremes.most_Mz, extremes.least_Mz})
     if (std::isfinite(e.at)) places.push_back(e.at);
   for (const double at : places) {
@@ -64,7 +62,8 @@ void stress_when_bent(const fem::InsideBuckling& inside, const fem::Response& re
   for (std::size_t m = 0; m < inside.divided.pieces.size(); ++m)
     for (const int piece : inside.divided.pieces[m]) {
       const auto p = static_cast<std::size_t>(piece);
-      const double stress = stress_of(frame, own[p], response, piece).stress;
+      const double stress =
+          stress_of(frame, own[p], response, piece, fem::extremes(frame, own[p], response, piece)).stress;
       if (std::isnan(stress)) continue;
       const double yield = frame.materials[static_cast<std::size_t>(frame.members[p].material)].yield;
       if (!(stress <= out.stress)) out.stress = stress, out.member = static_cast<int>(m);
@@ -147,8 +146,12 @@ FrameResults compute_frame(const FrameFile& file, int mode_count, int buckling_c
     FrameCase one;
     one.name = loads[i].name;
     one.balance = balance_of(file.frame, loads[i], responses[i]);
-    for (int m = 0; m < static_cast<int>(file.frame.members.size()); ++m)
-      one.stresses.push_back(stress_of(file.frame, loads[i], responses[i], m));
+    const std::vector<fem::LoadCase> own = fem::loads_by_member(file.frame, loads[i]);
+    for (int m = 0; m < static_cast<int>(file.frame.members.size()); ++m) {
+      const fem::LoadCase& load = own[static_cast<std::size_t>(m)];
+      one.extremes.push_back(fem::extremes(file.frame, load, responses[i], m));
+      one.stresses.push_back(stress_of(file.frame, load, responses[i], m, one.extremes.back()));
+    }
     one.response = std::move(responses[i]);
     results.cases.push_back(std::move(one));
   }

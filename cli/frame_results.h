@@ -7,6 +7,7 @@
 #include <vector>
 
 #include "cli/frame_file.h"
+#include "fem/diagram.h"
 #include "fem/inside.h"
 #include "fem/statics.h"
 
@@ -33,6 +34,7 @@ struct FrameCase {
   double balance =
       std::numeric_limits<double>::quiet_NaN();  ///< |loads + reactions| / |loads|, forces and moments [-]
   std::vector<MemberStress> stresses;            ///< one per member; NaN where moduli are not given
+  std::vector<fem::Extremes> extremes;           ///< one per member: moments and deflections between its ends
   fem::InsideBuckling buckling;                  ///< modes ascending
   FrameSecondOrder second_order;
 };

@@ -103,6 +103,33 @@ std::string reaction_lines(const FrameFile& file, const FrameCase& one, bool all
   return result + "\n";
 }
 
+// Moments and deflections between the nodes, where they are greatest over all members.
+std::string extreme_lines(const FrameFile& file, const FrameCase& one) {
+  struct Worst {
+    fem::Extreme extreme{0, 0};
+    std::size_t member = 0;
+    const char* axis = "";
+  } moment, bow;
+  const auto look = [](Worst& worst, const fem::Extreme& e, std::size_t member, const char* axis) {
+    if (std::abs(e.value) > std::abs(worst.extreme.value) * (1 + 1e-9)) worst = {e, member, axis};
+  };
+  for (std::size_t m = 0; m < one.extremes.size(); ++m) {
+    const fem::Extremes& e = one.extremes[m];
+    for (const fem::Extreme& my : {e.most_My, e.least_My}) look(moment, my, m, "about y");
+    for (const fem::Extreme& mz : {e.most_Mz, e.least_Mz}) look(moment, mz, m, "about z");
+    for (const fem::Extreme& y : {e.most_y, e.least_y}) look(bow, y, m, "along y");
+    for (const fem::Extreme& z : {e.most_z, e.least_z}) look(bow, z, m, "along z");
+  }
+  const auto line = [&](const char* what, const Worst& worst, Quantity quantity) {
+    if (worst.extreme.value == 0) return std::string();
+    return "  " + padded(what, 22) + padded(quantity_text(worst.extreme.value, quantity), 14) + worst.axis +
+           " of member " + file.frame.members[worst.member].name + " at " +
+           number(worst.extreme.at, 0, "%*.2f") + " of its length\n";
+  };
+  return line("extreme moment", moment, Quantity::torque) +
+         line("bows from its chord", bow, Quantity::length);
+}
+
 std::string stress_line(const FrameFile& file, const FrameCase& one) {
   int worst = -1, most_used = -1;
   double used = 0;
@@ -203,7 +230,7 @@ std::string frame_text(const std::string& name, const std::string& hash, const F
   std::string text = title(name, hash, file, results);
   for (const FrameCase& one : results.cases) {
     text += "Case " + one.name + "\n" + displacement_lines(file, one) + reaction_lines(file, one, all) +
-            stress_line(file, one) + buckling_line(one);
+            extreme_lines(file, one) + stress_line(file, one) + buckling_line(one);
     text += "  " + padded("proof", 22) + "residual " + number(one.response.residual, 0, "%*.1e") +
             ", balance of loads and reactions " + number(one.balance, 0, "%*.1e") + "\n";
   }

@@ -2,8 +2,10 @@
 
 #include <cmath>
 #include <numbers>
+#include <optional>
 
 #include "fem/inside.h"
+#include "fem/near_mechanism.h"
 #include "fem/shape_parts.h"
 #include "fem/units.h"
 #include "models/full_frame.h"
@@ -45,7 +47,8 @@ RowStability row_stability(const TroughDesign& design, const loads::CoefficientT
   RowStability out;
   out.elevation = elevation;
   out.freedoms = full.frame.freedoms();
-  const fem::InsideModes inside = fem::modes_inside(full.frame, count, limits);
+  const fem::InsideModes inside =
+      count > 0 ? fem::modes_inside(full.frame, count, limits) : fem::InsideModes{};
   for (const fem::Mode& mode : inside.modes)
     out.modes.push_back({mode.frequency, mode.residual, words_of(inside.divided.frame, mode.shape)});
   out.modes_proof = proof_of(inside);
@@ -70,7 +73,9 @@ RowStability row_stability(const TroughDesign& design, const loads::CoefficientT
   return out;
 }
 
-std::optional<Violation> stability_remark(const TroughDesign& design, const loads::CoefficientTable& table) {
+namespace {
+
+std::optional<Violation> buckling_remark(const TroughDesign& design, const loads::CoefficientTable& table) {
   if (!std::isfinite(design.operation.stow_at) || !design.wind.stow.given) return std::nullopt;
   const RowStability s = row_stability(design, table, design.operation.stow_at, 0, 1);
   if (s.buckling.empty() || s.buckling[0].factor >= 10) return std::nullopt;
@@ -87,6 +92,23 @@ std::optional<Violation> stability_remark(const TroughDesign& design, const load
                               " %; no criterion of this check has them.";
   v.advice = "Tie what bows (purlins, thicker or shorter ribs), then: focalframe modes";
   return v;
+}
+
+}  // namespace
+
+std::vector<Violation> frame_remarks(const TroughDesign& design, const loads::CoefficientTable& table) {
+  std::vector<Violation> remarks;
+  const FullFrame full = full_frame(build_trough(design), std::numbers::pi / 2);
+  if (const auto near = fem::near_mechanism(full.frame)) {
+    Violation v;
+    v.level = Violation::Level::warn;
+    v.element = "row";
+    v.head = "nearly a mechanism";
+    v.text = near->what();
+    remarks.push_back(v);
+  }
+  if (const auto buckles = buckling_remark(design, table)) remarks.push_back(*buckles);
+  return remarks;
 }
 
 }  // namespace focalframe::models

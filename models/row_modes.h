@@ -3,7 +3,6 @@
 /// How a row swings and where it would buckle: the whole assembly in one pose, what turns and what stands
 /// together.
 
-#include <optional>
 #include <string>
 #include <vector>
 
@@ -48,8 +47,8 @@ struct RowStability {
 RowStability row_stability(const TroughDesign& design, const loads::CoefficientTable& table, double elevation,
                            int count, int factors = 3);
 
-/// What to say beside a check when the buckling factor in the stow pose lies below 10: second-order effects
-/// are not in any criterion. None when there is no such pose or wind.
-std::optional<Violation> stability_remark(const TroughDesign& design, const loads::CoefficientTable& table);
+/// What to say about the frame beside a check: that it is nearly a mechanism, and the buckling factor in the
+/// stow pose when it lies below 10, because second-order effects are in no criterion.
+std::vector<Violation> frame_remarks(const TroughDesign& design, const loads::CoefficientTable& table);
 
 }  // namespace focalframe::models

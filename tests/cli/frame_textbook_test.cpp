@@ -108,6 +108,23 @@ TEST_CASE("a load that grows along a member, one on a part of it and one at a po
   CHECK(couple.r("b", 1) == near(-250));
 }
 
+TEST_CASE("the greatest moment and bow between the nodes are found and printed", "[frame]") {
+  // Propped cantilever of 4 m, 500 N/m: clamp w L^2 / 8 = 1000 N m; 9 w L^2 / 128 = 562.5 N m at 3/8 L from
+  // the prop; greatest deflection 4.12657e-4 m at 1.68614 m from it (Lindeburg, Civil Engineering Reference
+  // Manual, from its summary: 0.00541 w L^4 / E I at 0.4215 L).
+  const Solved s =
+      solve(beam(4, "<member-load case='1' member='m' fy='-500 N/m'/>\n", "ux uy uz rx ry rz", "uy uz"));
+  const fem::Extremes& e = s.results.cases.at(0).extremes.at(0);
+  CHECK(std::max(std::abs(e.most_Mz.value), std::abs(e.least_Mz.value)) == near(1000));
+  CHECK(std::min(std::abs(e.most_Mz.value), std::abs(e.least_Mz.value)) == near(562.5));
+  CHECK(e.least_y.value == near(-4.12657e-4));
+  CHECK(e.least_y.at == near(1 - 0.421535, 1e-4));
+  const std::string text = frame_text("t", "0123456789", s.file, s.results, false);
+  INFO(text);
+  CHECK_THAT(text, Contains("extreme moment        1 kN m") || Contains("extreme moment        -1 kN m"));
+  CHECK_THAT(text, Contains("bows from its chord") && Contains("along y of member m at 0.58"));
+}
+
 TEST_CASE("a settling support loads a clamped span in its own case only", "[frame]") {
   // Clamped span of 4 m, one end sinks by 5 mm: M = 6 E I d / L^2 = 3150 N m, V = 12 E I d / L^3 = 1575 N.
   const Solved s = solve(beam(4,
