@@ -5,7 +5,7 @@
 #include <map>
 #include <set>
 
-#include "cli/draft_xml.h"
+#include "cli/escaped.h"
 #include "cli/frame_words.h"
 #include "fem/beam.h"
 

@@ -100,9 +100,12 @@ InsideModes modes_inside(const Frame& frame, int count, const InsideLimits& limi
   out.divided = divide(frame, pieces);
   out.modes = natural_modes(out.divided.frame, count);
   if (out.modes.empty()) return out;
+  const std::vector<int> coarse = pieces;
   pieces = pieces_for(vibration_turns(frame, out.modes.back().frequency), limits);
-  out.divided = divide(frame, pieces);
-  out.modes = natural_modes(out.divided.frame, count);
+  if (pieces != coarse) {
+    out.divided = divide(frame, pieces);
+    out.modes = natural_modes(out.divided.frame, count);
+  }
   out.most_pieces = *std::max_element(pieces.begin(), pieces.end());
   if (!out.modes.empty())
     out.error = largest_error(vibration_turns(frame, out.modes.back().frequency), pieces);
@@ -121,8 +124,9 @@ InsideBuckling buckling_inside(const Frame& frame, const LoadCase& load, int cou
   solve();
   if (out.modes.empty()) return out;
   const Response response = StaticSolver(frame).solve(load);
+  const std::vector<int> coarse = pieces;
   pieces = pieces_for(buckling_turns(frame, load, response, out.modes.back().factor), limits);
-  solve();
+  if (pieces != coarse) solve();
   out.most_pieces = *std::max_element(pieces.begin(), pieces.end());
   if (!out.modes.empty())
     out.error = largest_error(buckling_turns(frame, load, response, out.modes.back().factor), pieces);

@@ -63,7 +63,7 @@ std::string shape_words(const Frame& frame, const ShapeParts& parts, const std::
   static const char* const how[] = {"bending", "twist", "stretch", "give"};
   std::string text;
   Index way = 0;
-  if (parts.sway.cwiseAbs().maxCoeff(&way) > 0.8)
+  if (parts.sway.cwiseAbs().maxCoeff(&way) > 0.9)
     text = "sways " + ways[static_cast<std::size_t>(way)] + "; ";
   if (parts.parts.empty()) text += "moves freely, nothing is strained";
   double told = 0;

@@ -20,7 +20,8 @@ namespace {
 constexpr double greatest_factor = 1000;
 
 // A row has thousands of members, most of them short: more pieces would cost time and change nothing.
-constexpr fem::InsideLimits limits{.error = 5e-3, .first_pieces = 1, .most_pieces = 8, .most_members = 20000};
+constexpr fem::InsideLimits row_limits{
+    .error = 5e-3, .first_pieces = 1, .most_pieces = 8, .most_members = 20000};
 
 template <class Inside>
 StabilityProof proof_of(const Inside& inside) {
@@ -41,7 +42,9 @@ std::string words_of(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
 }  // namespace
 
 RowStability row_stability(const TroughDesign& design, const loads::CoefficientTable& table, double elevation,
-                           int count, int factors) {
+                           int count, int factors, bool divide) {
+  fem::InsideLimits limits = row_limits;
+  if (!divide) limits.most_pieces = 1;
   const RowModel row(build_trough(design), {});
   const FullFrame full = full_frame(row.collector(), elevation);
   RowStability out;
@@ -77,7 +80,7 @@ namespace {
 
 std::optional<Violation> buckling_remark(const TroughDesign& design, const loads::CoefficientTable& table) {
   if (!std::isfinite(design.operation.stow_at) || !design.wind.stow.given) return std::nullopt;
-  const RowStability s = row_stability(design, table, design.operation.stow_at, 0, 1);
+  const RowStability s = row_stability(design, table, design.operation.stow_at, 0, 1, false);
   if (s.buckling.empty() || s.buckling[0].factor >= 10) return std::nullopt;
   const double factor = s.buckling[0].factor;
   Violation v;
