@@ -106,7 +106,7 @@ std::string loads_text(const Assessment& a) {
                "6.3.2; end moments amplified and added linearly; 100 % = at the limit",
                2);
   for (const auto& [group, use] : a.strength.buckling)
-    out += text_of("  %-16s %5.1f %%  %8s of %-8s  %-20s %s\n", group.c_str(), 100 * use.used,
+    out += text_of("  %-13s %4.0f %% %8s of %-8s %-20s %s\n", group.c_str(), 100 * use.used,
                    shown(use.compression, Quantity::force).c_str(),
                    shown(use.resistance, Quantity::force).c_str(), models::place_text(use.state).c_str(),
                    use.part.c_str());
