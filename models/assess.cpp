@@ -22,8 +22,10 @@ using Eigen::VectorXd;
 
 class Check {
  public:
-  Check(const TroughDesign& design, const loads::CoefficientTable& table, std::shared_ptr<const RowModel> row)
+  Check(const TroughDesign& design, const loads::CoefficientTable& table, std::shared_ptr<const RowModel> row,
+        const AssessOptions& options)
       : d_(design),
+        options_(options),
         table_(table),
         owned_(std::move(row)),
         row_(*owned_),
@@ -129,11 +131,11 @@ class Check {
     for (const State& state : states) {
       if (state.kind != StateKind::operate) continue;
       if (rows.empty()) {
-        rows.push_back({state, true, Spread::linear, {}});
+        rows.push_back({state, true, Spread::linear, {}, {}});
         columns.push_back(weight);
       }
       for (Spread spread : on_row_.spreads(loads::pitch_seen_by_wind(state.elevation, state.wind_from))) {
-        rows.push_back({state, false, spread, {}});
+        rows.push_back({state, false, spread, {}, {}});
         columns.push_back(weight + mean_wind(pose, state, spread));
       }
     }
@@ -141,8 +143,11 @@ class Check {
     MatrixXd amplitudes(weight.size(), static_cast<int>(columns.size()));
     for (std::size_t i = 0; i < columns.size(); ++i) amplitudes.col(static_cast<int>(i)) = columns[i];
     const std::vector<OpticalResult> results = optics_.look(pose, amplitudes);
+    std::vector<OpticalMotion> motions;
+    if (options_.trace_rays > 0) motions = optics_.motions(pose, amplitudes);
     for (std::size_t i = 0; i < rows.size(); ++i) {
       rows[i].result = results[i];
+      if (!motions.empty()) rows[i].trace = trace_row(optics_, motions[i], options_.trace_rays);
       out_.optics.push_back(rows[i]);
     }
   }
@@ -215,6 +220,22 @@ class Check {
           out_.optics[i].result.intercept <
               out_.optics[static_cast<std::size_t>(out_.worst_light)].result.intercept)
         out_.worst_light = static_cast<int>(i);
+    if (out_.worst_light < 0) return;
+    const OpticalRow& worst = out_.optics[static_cast<std::size_t>(out_.worst_light)];
+    const PoseModel pose = row_.pose(worst.state.elevation);
+    const VectorXd weight = weight_amplitudes(row_, worst.state.elevation);
+    const VectorXd all = worst.calm ? weight : VectorXd(weight + mean_wind(pose, worst.state, worst.spread));
+    out_.study = study_optics(optics_, d_, pose, weight, all);
+    if (options_.maps) {
+      const OpticalMotion motion = optics_.motions(pose, all).front();
+      out_.maps = aperture_maps(optics_, motion);
+      out_.receiver_map = receiver_map(optics_, motion);
+    }
+    if (!options_.rigging) return;
+    std::vector<double> poses;
+    for (const OpticalRow& row : out_.optics)
+      if (row.calm) poses.push_back(row.state.elevation);
+    out_.rigging = best_rigging(optics_, poses, d_.optics.set_true);
   }
 
   void prove() {
@@ -256,6 +277,7 @@ class Check {
   }
 
   const TroughDesign& d_;
+  const AssessOptions& options_;
   const loads::CoefficientTable& table_;
   std::shared_ptr<const RowModel> owned_;
   const RowModel& row_;
@@ -279,11 +301,11 @@ Assessment assess(const TroughDesign& design, const loads::CoefficientTable& tab
     if (refine == 1 && options.built && same_frame(design, options.built->design)) return options.built->row;
     return std::make_shared<const RowModel>(build_trough(design, refine), table.stations);
   };
-  Check check(design, table, built(options.refine));
+  Check check(design, table, built(options.refine), options);
   Assessment out = check.run();
   if (options.discretisation && out.worst_light >= 0) {
     const OpticalRow& worst = out.optics[static_cast<std::size_t>(out.worst_light)];
-    const OpticalResult fine = Check(design, table, built(2 * options.refine)).again(worst);
+    const OpticalResult fine = Check(design, table, built(2 * options.refine), options).again(worst);
     out.proof.slope_change = fine.slope / worst.result.slope - 1;
     out.proof.intercept_change = fine.intercept - worst.result.intercept;
   }

@@ -2,6 +2,7 @@
 
 /// The main job: a trough design in, an assessment out.
 
+#include <cstdint>
 #include <memory>
 
 #include "models/assessment.h"
@@ -19,6 +20,9 @@ BuiltRow build_row(const TroughDesign& design, const loads::CoefficientTable& ta
 struct AssessOptions {
   bool discretisation = true;       ///< solve once more with halved elements
   int refine = 1;                   ///< multiplies the elements along a rib
+  std::int64_t trace_rays = 0;      ///< rays traced in every optical state; 0 = none
+  bool maps = false;                ///< maps of the state with the least light
+  bool rigging = false;             ///< look for the best elevation to set the panels true at
   const BuiltRow* built = nullptr;  ///< used when its frame is the design's own; else the row is built anew
 };
 

@@ -7,7 +7,11 @@
 #include <vector>
 
 #include "loads/wind.h"
+#include "models/optical_maps.h"
 #include "models/optics_check.h"
+#include "models/optics_study.h"
+#include "models/rigging.h"
+#include "models/row_trace.h"
 #include "models/schema.h"
 #include "models/states.h"
 #include "models/strength_check.h"
@@ -39,6 +43,7 @@ struct OpticalRow {
   bool calm = false;  ///< weight only
   Spread spread = Spread::linear;
   OpticalResult result;
+  RowTrace trace;  ///< only when AssessOptions asks for rays
 };
 
 /// Numbers that show the calculation is sound.
@@ -104,6 +109,10 @@ struct Assessment {
 
   std::vector<OpticalRow> optics;
   int worst_light = -1;  ///< index into optics
+  OpticsStudy study;     ///< of that row
+  ApertureMaps maps;     ///< of that row, when asked for; else empty
+  ReceiverMap receiver_map;
+  Rigging rigging;  ///< when asked for
   StrengthResult strength;
   std::vector<WindUse> winds;
   double divergence_speed = not_given;  ///< of the state that comes nearest to it [m/s]

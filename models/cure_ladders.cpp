@@ -132,6 +132,36 @@ void rib_ladders(std::vector<Ladder>& all, const TroughDesign& d, const Keys& li
   all.push_back(std::move(depth));
 }
 
+/// Whether the mirror's own bending is worth mending where light or slope is short.
+bool panels_bend(const Assessment& a) {
+  const auto costs = [](const PartLoss& p) { return p.name == "panel" && p.alone > 0.003; };
+  return std::any_of(a.optics.begin(), a.optics.end(), [&](const OpticalRow& row) {
+    const auto& parts = row.result.attribution.parts;
+    return row.result.slope_panel > 0.5 * row.result.slope || std::any_of(parts.begin(), parts.end(), costs);
+  });
+}
+
+// A stiffer skin, or more of what carries it: purlins under a skin on purlins, else ribs.
+void panel_ladders(std::vector<Ladder>& all, const TroughDesign& d, const Keys& light) {
+  const Keys shape = with(light, {"slope"});
+  Ladder skin{"mirror", shape, {}}, pitch{"mirror supports", shape, {}};
+  if (!std::isnan(d.mirror.thickness) && std::isnan(d.mirror.bending_stiffness))
+    for (double t : plates)
+      if (t * mm > 1.001 * d.mirror.thickness && t <= 6)
+        skin.rungs.push_back({"mirror " + number_text(t) + " mm thick",
+                              [t](TroughDesign& x) { x.mirror.thickness = t * mm; }});
+  const bool on_purlins = d.mirror.fixed_to == "purlins";
+  for (int more : {1, 2, 3, 4}) {
+    const int count = on_purlins ? d.purlins.count + 2 * more : d.ribs.per_module + more;
+    pitch.rungs.push_back(
+        {std::to_string(count) + (on_purlins ? " purlins" : " ribs a module") + ", from " +
+             std::to_string(on_purlins ? d.purlins.count : d.ribs.per_module),
+         [=](TroughDesign& x) { (on_purlins ? x.purlins.count : x.ribs.per_module) = count; }});
+  }
+  all.push_back(std::move(skin));
+  all.push_back(std::move(pitch));
+}
+
 bool fits(const TroughDesign& design) {
   for (const Violation& v : validate(design))
     if (v.level == Violation::Level::stop) return false;
@@ -157,6 +187,7 @@ std::vector<Ladder> size_ladders(const TroughDesign& d, const Assessment& a) {
   std::vector<Ladder> all;
   tube_ladders(all, d, light);
   rib_ladders(all, d, light);
+  if (panels_bend(a)) panel_ladders(all, d, light);
   profile_ladder(all, "pylons", {"stress pylon", "buckling pylon"}, "pylons", d,
                  [](TroughDesign& x) -> ProfileInput& { return x.pylons.profile; });
   profile_ladder(all, "posts", {"receiver-shift", "stress receiver post", "buckling receiver post"},

@@ -85,6 +85,7 @@ struct EndPlatesInput {
   double mass = not_given;                             ///< each [kg]
   double twist_stiffness = not_given;    ///< of the joint between two modules [N m/rad]; NaN = rigid
   double bending_stiffness = not_given;  ///< of the joint, coupling "continuous" only [N m/rad]; NaN = rigid
+  double play = 0;                       ///< full width of the play in each joint between modules [rad]
 };
 
 struct MirrorInput {
@@ -96,6 +97,9 @@ struct MirrorInput {
   double pad_height = 0;          ///< facets: mirror back above what it stands on [m]
   double pad_mass = 0;            ///< facets: pads and brackets [kg/m^2]
   bool sheet_braces_ribs = false;
+  int facets_across = 0;                 ///< facets: panels from rim to rim, even; 0 = one on each side
+  double pad_pitch = not_given;          ///< facets: pads along the row [m]
+  double bending_stiffness = not_given;  ///< of the skin per width, instead of thickness, material [N m]
 };
 
 struct SleeveInput {
@@ -114,6 +118,8 @@ struct ReceiverInput {
   std::string material;
   std::string filled_with;          ///< water | oil | salt | nothing
   double fill_density = not_given;  ///< overrides the word [kg/m^3]
+  std::string catches = "tube";     ///< what the light must meet: | "strip"
+  double strip_width = not_given;   ///< of a flat target in the focus that faces the mirror [m]
   SleeveInput sleeve;
   PostsInput posts;
 };
@@ -151,6 +157,7 @@ struct DriveInput {
 struct SensorInput {
   std::string kind = "inclinometer";  ///< | "encoder" | "sun"
   std::string at = "tube beside the drive";
+  int module = 0;  ///< sits on this module instead, counted from the row's first end; 0 = none named
   std::string correction = "sensor";  ///< | "none" | "row-mean"
 };
 
@@ -200,7 +207,8 @@ struct OpticsInput {
   double set_true = not_given;         ///< elevation at which the panels are set on the loaded frame [rad]
   std::string set_true_word;           ///< "unloaded"; then set_true is NaN
   double sun = 2.6e-3;                 ///< rms of a Gaussian sun [rad]
-  std::string sun_shape = "gaussian";  ///< | "pillbox" | "buie"
+  std::string sun_shape = "gaussian";  ///< | "pillbox" | "buie" | "table"
+  std::string sun_table;               ///< "0 mrad 1, 4 mrad 0.9, ...": angle from the middle, radiance
   double circumsolar_ratio = not_given;
   double workshop_slope = not_given;  ///< rms of the mirror normal, transverse [rad]
   double mirror_scatter = 0;          ///< rms of the reflected ray [rad]
@@ -215,6 +223,7 @@ struct LimitsInput {
   double slope = not_given;            ///< residual slope rms [rad]
   double twist = not_given;            ///< greatest module twist against the sensor [rad]
   double receiver_shift = not_given;   ///< [m]
+  double re_aim = not_given;           ///< shortest time between two turns by hand [s]
   std::string strength;                ///< "EN 1990" | "ASCE 7" | "" ; or
   double strength_factor = not_given;  ///< plain factor on yield, unfactored actions [-]
 };

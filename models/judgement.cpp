@@ -50,6 +50,8 @@ void judge_focus(const TroughDesign& d, Assessment& a) {
   const OpticalRow* receiver = worst_by(a.optics, &OpticalResult::receiver_shift);
   add("receiver-shift", "receiver shift", Quantity::length, receiver->result.receiver_shift,
       limits.receiver_shift, false, *receiver);
+  if (!std::isnan(limits.re_aim))
+    add("re-aim", "time to re-aim", Quantity::time, a.study.re_aim_time, limits.re_aim, true, light);
 }
 
 void judge_strength(const TroughDesign& d, Assessment& a) {
@@ -271,12 +273,11 @@ void judge(const TroughDesign& design, Assessment& a) {
   for (const auto& [element, basis] : design.basis)
     if (basis == "guess") ++a.guesses;
   a.not_checked = {"joints, welds, bolts, bearings and mirror pads",
-                   "mirror sheet or glass between its supports",
+                   "stress of mirror sheet or glass between its supports",
                    "local buckling of thin walls, buckling of the frame as a whole",
                    "fatigue, temperature, snow, ice, earthquake",
                    "wind along the row and oblique wind",
-                   "play of the drive and the couplings",
-                   "row ends and shading of the receiver"};
+                   "row ends and shading of the receiver (shown beside the light, not in it)"};
   remark(design, a);
   caution(design, a, a.cautions);
 }

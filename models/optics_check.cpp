@@ -3,20 +3,32 @@
 #include <algorithm>
 #include <cmath>
 
+#include "models/sun_table.h"
 #include "models/wind_load.h"
 
 namespace focalframe::models {
 namespace {
 
 using Eigen::MatrixXd;
+using Eigen::RowVectorXd;
 using Eigen::VectorXd;
 
-std::span<const double> part(const VectorXd& all, int first, int count) {
-  return {all.data() + first, static_cast<std::size_t>(count)};
+std::span<const double> span_of(const MatrixXd& m, Eigen::Index from, Eigen::Index count) {
+  return {m.data() + from, static_cast<std::size_t>(count)};
 }
 
-double keep_greater(double greatest, double value) {
-  return std::isnan(greatest) || std::abs(value) > std::abs(greatest) ? value : greatest;
+double greatest(const RowVectorXd& values) {
+  Eigen::Index at = 0;
+  values.cwiseAbs().maxCoeff(&at);
+  return values[at];
+}
+
+std::vector<double> flat(const MatrixXd& m) { return {m.data(), m.data() + m.size()}; }
+
+// The module a sensor on the row sits on when none is named: beside the drive.
+int sensor_module(const SensorInput& sensor, const Collector& row) {
+  if (sensor.module > 0) return sensor.module - 1;
+  return std::min(row.drive_bearing, static_cast<int>(row.modules.size()) - 1);
 }
 
 }  // namespace
@@ -27,6 +39,8 @@ BeamError beam_error(const OpticsInput& optics) {
     error.sun = pillbox_sun();
   else if (optics.sun_shape == "buie")
     error.sun = buie_sun(optics.circumsolar_ratio);
+  else if (optics.sun_shape == "table")
+    error.sun = sun_of_table(optics.sun_table);
   else
     error.sun = gaussian_sun(optics.sun);
   error.slope_rms = error.longitudinal_slope_rms =
@@ -37,168 +51,224 @@ BeamError beam_error(const OpticsInput& optics) {
   return error;
 }
 
+double target_half_width(const ReceiverInput& receiver) {
+  return (receiver.catches == "strip" ? receiver.strip_width : receiver.outside_diameter) / 2;
+}
+
+LineReceiver target_kind(const ReceiverInput& receiver) {
+  return receiver.catches == "strip" ? LineReceiver::strip : LineReceiver::tube;
+}
+
 OpticsCheck::OpticsCheck(const RowModel& row, const TroughDesign& design)
     : row_(row),
       parabola_{row.collector().width, row.collector().focal_length},
       beam_(beam_error(design.optics)),
-      intercept_(parabola_, row.collector().receiver_radius, beam_, row.collector().skin.row_y),
-      sensor_kind_(design.sensor.kind),
-      correction_(design.sensor.correction) {
+      half_width_(models::target_half_width(design.receiver)),
+      target_(target_kind(design.receiver)),
+      intercept_(parabola_, half_width_, beam_, row.collector().skin.row_y, target_),
+      panel_(design, row),
+      sections_(parabola_, row.collector().skin.row_y, row.collector().skin.row_weight),
+      sensor_(design.sensor) {
   const Skin& skin = row.collector().skin;
   for (double along : skin.station_weight)
     for (double across : skin.row_weight) weight_.push_back(along * across);
-  for (double y : row.collector().skin.row_y) terms_.push_back(miss_terms(parabola_, y));
-  if (!std::isnan(design.optics.set_true)) {
-    set_ = motion(row.pose(design.optics.set_true), weight_amplitudes(row, design.optics.set_true));
+  row_weight_ = Eigen::Map<const VectorXd>(skin.row_weight.data(), skin.rows);
+  station_weight_ = Eigen::Map<const VectorXd>(skin.station_weight.data(),
+                                               static_cast<Eigen::Index>(skin.station_weight.size()));
+  for (VectorXd* v : {&mirror_v_, &mirror_w_, &rotation_, &along_, &aim_}) v->resize(skin.rows);
+  for (int r = 0; r < skin.rows; ++r) {
+    const double y = skin.row_y[static_cast<std::size_t>(r)];
+    const MissTerms t = miss_terms(parabola_, y);
+    mirror_v_[r] = t.mirror_v;
+    mirror_w_[r] = t.mirror_w;
+    rotation_[r] = t.rotation;
+    aim_[r] = t.aim;
+    // A normal turned along the row turns the ray across it at an incidence angle; light travels towards +x.
+    along_[r] = t.rotation * std::tan(beam_.incidence) * std::sin(parabola_.ray_angle(y) / 2);
   }
+  if (!std::isnan(design.optics.set_true))
+    set_ = motions(row.pose(design.optics.set_true), weight_amplitudes(row, design.optics.set_true), false);
 }
 
-OpticsCheck::Motion OpticsCheck::motion(const PoseModel& pose, const MatrixXd& amplitudes) const {
-  Motion m;
-  m.v = row_.evaluate(row_.mirror_v, pose, amplitudes);
-  m.w = row_.evaluate(row_.mirror_w, pose, amplitudes);
-  m.turn = row_.evaluate(row_.mirror_turn, pose, amplitudes);
-  m.along = row_.evaluate(row_.mirror_along, pose, amplitudes);
-  m.receiver = row_.evaluate(row_.receiver, pose, amplitudes);
-  m.vertex = row_.evaluate(row_.vertex, pose, amplitudes);
-  m.module_turn = row_.evaluate(row_.module_turn, pose, amplitudes);
-  m.sensor = row_.evaluate(row_.sensor_turn, pose, amplitudes);
+std::vector<OpticalMotion> OpticsCheck::motions(const PoseModel& pose, const MatrixXd& amplitudes,
+                                                bool set_true) const {
+  const Skin& skin = row_.collector().skin;
+  const Eigen::Index rows = skin.rows, stations = static_cast<Eigen::Index>(skin.station_x.size());
+  const auto of = [&](const LinearOutput& output) { return row_.evaluate(output, pose, amplitudes); };
+  const MatrixXd v = of(row_.mirror_v), w = of(row_.mirror_w), turn = of(row_.mirror_turn),
+                 along = of(row_.mirror_along), receiver = of(row_.receiver), vertex = of(row_.vertex),
+                 module_turn = of(row_.module_turn), beside = of(row_.sensor_turn);
   const int head = 6 * row_.collector().drive_bearing + fem::rx;
-  m.encoder = (pose.bearing_motion.row(row_.drive_turn()) - pose.head_motion.row(head)) * amplitudes;
-  if (set_.v.size() > 0) {
-    MatrixXd* const now[] = {&m.v,      &m.w,           &m.turn,   &m.along,  &m.receiver,
-                             &m.vertex, &m.module_turn, &m.sensor, &m.encoder};
-    const MatrixXd* const set[] = {&set_.v,           &set_.w,        &set_.turn,
-                                   &set_.along,       &set_.receiver, &set_.vertex,
-                                   &set_.module_turn, &set_.sensor,   &set_.encoder};
-    for (std::size_t i = 0; i < 9; ++i) now[i]->colwise() -= set[i]->col(0);
+  const MatrixXd encoder =
+      (pose.bearing_motion.row(row_.drive_turn()) - pose.head_motion.row(head)) * amplitudes;
+  const PanelMotion panel = panel_.motion(amplitudes);
+  const auto grid = [&](const MatrixXd& m, Eigen::Index c, Eigen::Index height) {
+    return MatrixXd(Eigen::Map<const MatrixXd>(m.col(c).data(), height, stations));
+  };
+  std::vector<OpticalMotion> out;
+  for (Eigen::Index c = 0; c < amplitudes.cols(); ++c) {
+    OpticalMotion m{
+        grid(v, c, rows),       grid(w, c, rows),       grid(turn, c, rows),       grid(along, c, rows),
+        grid(panel.v, c, rows), grid(panel.w, c, rows), grid(panel.turn, c, rows), grid(panel.along, c, rows),
+        grid(receiver, c, 2),   grid(vertex, c, 2),     module_turn.col(c),        beside(0, c),
+        encoder(0, c)};
+    if (set_true && !set_.empty()) {
+      const OpticalMotion& set = set_.front();
+      m.v -= set.v;
+      m.w -= set.w;
+      m.turn -= set.turn;
+      m.along -= set.along;
+      m.receiver -= set.receiver;
+      m.vertex -= set.vertex;
+      m.module_turn -= set.module_turn;
+      m.beside_drive -= set.beside_drive;
+      m.encoder -= set.encoder;
+    }
+    out.push_back(std::move(m));
   }
-  return m;
+  return out;
 }
 
-std::vector<OpticalResult> OpticsCheck::look(const PoseModel& pose, const MatrixXd& amplitudes) const {
-  const Motion all = motion(pose, amplitudes);
+MatrixXd OpticsCheck::frame_miss(const OpticalMotion& m) const {
+  return mirror_v_.asDiagonal() * m.v + mirror_w_.asDiagonal() * m.w + rotation_.asDiagonal() * m.turn +
+         along_.asDiagonal() * m.along - mirror_v_ * m.receiver.row(0) - mirror_w_ * m.receiver.row(1);
+}
+
+MatrixXd OpticsCheck::panel_miss(const OpticalMotion& m) const {
+  return mirror_v_.asDiagonal() * m.panel_v + mirror_w_.asDiagonal() * m.panel_w +
+         rotation_.asDiagonal() * m.panel_turn + along_.asDiagonal() * m.panel_along;
+}
+
+MatrixXd OpticsCheck::miss(const OpticalMotion& m, double back) const {
+  return (frame_miss(m) + panel_miss(m)).colwise() + back * aim_;
+}
+
+SensorReadings OpticsCheck::readings(const OpticalMotion& m) const {
+  const Skin& skin = row_.collector().skin;
+  const int module = sensor_module(sensor_, row_.collector());
+  const MatrixXd raw = miss(m, 0).middleCols(module * skin.stations, skin.stations);
+  const VectorXd share = row_weight_.cwiseProduct(aim_);
+  const auto along = station_weight_.segment(module * skin.stations, skin.stations);
+  SensorReadings read;
+  read.encoder = m.encoder;
+  read.inclinometer = sensor_.module > 0 ? m.module_turn[module] : m.beside_drive;
+  read.sun = -(share.transpose() * raw * along).value() / (share.dot(aim_) * along.sum());
+  read.row_mean = m.module_turn.mean();
+  return read;
+}
+
+double OpticsCheck::correction(const SensorReadings& read, const std::string& kind,
+                               const std::string& rule) const {
+  if (rule == "none") return 0;
+  if (rule == "row-mean") return read.row_mean;
+  return kind == "encoder" ? read.encoder : kind == "sun" ? read.sun : read.inclinometer;
+}
+
+double OpticsCheck::correction(const SensorReadings& read) const {
+  return correction(read, sensor_.kind, sensor_.correction);
+}
+
+double OpticsCheck::caught(const MatrixXd& miss) const {
+  return intercept_.mean(span_of(miss, 0, miss.size()), weight_);
+}
+
+double OpticsCheck::caught(const MatrixXd& miss, int module) const {
+  const Skin& skin = row_.collector().skin;
+  const Eigen::Index count = skin.stations * skin.rows;
+  return intercept_.mean(span_of(miss, module * count, count),
+                         std::span<const double>(weight_).subspan(static_cast<std::size_t>(module * count),
+                                                                  static_cast<std::size_t>(count)));
+}
+
+std::vector<MissPart> OpticsCheck::parts(const OpticalMotion& m, double back) const {
+  const Eigen::Index tube = m.v.rows() / 2;  // this row rides on the tube itself
+  const SectionFit::Shapes shape = sections_.fit(m.v, m.w, m.turn);
+  const RowVectorXd turned = m.turn.row(tube);
+  const double mean = m.module_turn.mean(), f = parabola_.focal_length;
+  const Eigen::Index stations = turned.size();
+  const RowVectorXd lateral = m.receiver.row(0) - shape.vertex_v + f * turned;
+  const RowVectorXd axial = m.receiver.row(1) - shape.vertex_w;
+  const MatrixXd tilt = aim_ * RowVectorXd::Constant(stations, back - mean);
+  const MatrixXd twist = -aim_ * (turned.array() - mean).matrix();
+  const MatrixXd receiver = -mirror_v_ * lateral - mirror_w_ * axial;
+  const MatrixXd focus = mirror_w_ * shape.focal_change;
+  const MatrixXd ribs = (frame_miss(m).colwise() + back * aim_) - tilt - twist - receiver - focus;
+  return {{"tilt", flat(tilt)},   {"twist", flat(twist)}, {"receiver", flat(receiver)},
+          {"focus", flat(focus)}, {"ribs", flat(ribs)},   {"panel", flat(panel_miss(m))}};
+}
+
+std::vector<OpticalResult> OpticsCheck::look(const PoseModel& pose, const MatrixXd& amplitudes,
+                                             OpticsDetail detail) const {
   std::vector<OpticalResult> results;
-  for (int c = 0; c < amplitudes.cols(); ++c) results.push_back(look_at(all, c));
+  for (const OpticalMotion& m : motions(pose, amplitudes)) results.push_back(look_at(m, detail));
   return results;
 }
 
-// The receiver against the focus carried along by the tube: the vertex line's motion and the rotation about
-// it.
-void OpticsCheck::look_at_receiver(const Eigen::Vector2d& receiver, const Eigen::Vector2d& vertex,
-                                   double twist, OpticalResult& out) const {
-  const double lateral = receiver[0] - vertex[0] + parabola_.focal_length * twist;
-  const double axial = receiver[1] - vertex[1];
-  const double shift = std::hypot(lateral, axial);
-  if (shift <= out.receiver_shift) return;
-  out.receiver_shift = shift;
-  out.receiver_lateral = lateral;
-  out.receiver_axial = axial;
+OpticalResult OpticsCheck::look_at(const OpticalMotion& m, OpticsDetail detail) const {
+  OpticalResult out;
+  const SensorReadings read = readings(m);
+  out.sensor_reading = correction(read);
+  const MatrixXd missed = miss(m, out.sensor_reading);
+  out.intercept = caught(missed);
+  for (double turn : m.module_turn) out.module_twist.push_back(turn - out.sensor_reading);
+  out.worst_twist = (m.module_turn.array() - out.sensor_reading).abs().maxCoeff();
+  look_at_shape(m, out);
+  look_at_receiver(m, out);
+  if (detail != OpticsDetail::all) return out;
+  out.intercept_at_drive = caught(miss(m, correction(read, sensor_.kind, "sensor")));
+  out.intercept_row_mean = caught(miss(m, read.row_mean));
+  for (int i = 0; i < row_.collector().skin.modules; ++i) out.module_intercept.push_back(caught(missed, i));
+  out.worst_module =
+      static_cast<int>(std::min_element(out.module_intercept.begin(), out.module_intercept.end()) -
+                       out.module_intercept.begin());
+  out.attribution = attribute(intercept_, weight_, parts(m, out.sensor_reading));
+  return out;
 }
 
-OpticalResult OpticsCheck::look_at(const Motion& all, int column) const {
+void OpticsCheck::look_at_shape(const OpticalMotion& m, OpticalResult& out) const {
   const Skin& skin = row_.collector().skin;
-  const int rows = skin.rows, stations = skin.modules * skin.stations, samples = skin.samples();
-  struct {
-    VectorXd v, w, turn, along, receiver, vertex, module_turn;
-    double sensor, encoder;
-  } const m{all.v.col(column),           all.w.col(column),        all.turn.col(column),
-            all.along.col(column),       all.receiver.col(column), all.vertex.col(column),
-            all.module_turn.col(column), all.sensor(0, column),    all.encoder(0, column)};
-  VectorXd raw(samples);
-  double aim_top = 0, aim_bottom = 0;
-  for (int st = 0; st < stations; ++st)
-    for (int r = 0; r < rows; ++r) {
-      const int s = st * rows + r;
-      const MissTerms& t = terms_[static_cast<std::size_t>(r)];
-      raw[s] = t.mirror_v * m.v[s] + t.mirror_w * m.w[s] + t.rotation * m.turn[s] +
-               t.receiver_v * m.receiver[2 * st] + t.receiver_w * m.receiver[2 * st + 1];
-      const double a = weight_[static_cast<std::size_t>(s)];
-      aim_top -= a * t.aim * raw[s];
-      aim_bottom += a * t.aim * t.aim;
-    }
-
-  OpticalResult out;
-  const double drive_angle = sensor_kind_ == "encoder" ? m.encoder
-                             : sensor_kind_ == "sun"   ? aim_top / aim_bottom
-                                                       : m.sensor;
-  const double row_mean = m.module_turn.mean();
-  out.sensor_reading = correction_ == "none" ? 0 : correction_ == "row-mean" ? row_mean : drive_angle;
-  const auto aimed = [&](double back) {
-    VectorXd miss = raw;
-    for (int st = 0; st < stations; ++st)
-      for (int r = 0; r < rows; ++r) miss[st * rows + r] += terms_[static_cast<std::size_t>(r)].aim * back;
-    return miss;
-  };
-  const auto caught = [&](const VectorXd& miss) { return intercept_.mean(part(miss, 0, samples), weight_); };
-  const VectorXd miss = aimed(out.sensor_reading);
-  out.intercept = caught(miss);
-  out.intercept_at_drive = caught(aimed(drive_angle));
-  out.intercept_row_mean = caught(aimed(row_mean));
-  for (int i = 0; i < skin.modules; ++i) out.module_twist.push_back(m.module_turn[i] - out.sensor_reading);
-  for (double t : out.module_twist) out.worst_twist = keep_greater(out.worst_twist, t);
-  out.worst_twist = std::abs(out.worst_twist);
-
-  // Every cross-section on its own: the tube twists inside a module too, and that is twist, not shape.
-  std::vector<MissPart> parts = {{"twist", {}}, {"receiver", {}}, {"focus", {}}, {"ribs", {}}};
-  const auto append = [](std::vector<double>& to, const std::vector<double>& more) {
-    to.insert(to.end(), more.begin(), more.end());
-  };
-  double along = 0, area = 0;
+  const SectionFit::Shapes shape = sections_.fit(m.v + m.panel_v, m.w + m.panel_w, m.turn + m.panel_turn);
+  out.focal_change = greatest(shape.focal_change);
+  out.focal_shift = greatest(shape.focal_line_w);
+  const VectorXd share = row_weight_ / row_weight_.sum();
+  const RowVectorXd before = share.transpose() * shape.slope_before.cwiseAbs2();
+  const RowVectorXd after = share.transpose() * shape.slope_after.cwiseAbs2();
   for (int i = 0; i < skin.modules; ++i) {
-    double length = 0, before = 0, after = 0;
-    for (int st = i * skin.stations; st < (i + 1) * skin.stations; ++st) {
-      const int first = st * rows;
-      const double twist = m.turn[first + rows / 2];  // this row rides on the tube itself
-      TroughSamples section;
-      section.y = skin.row_y;
-      section.weight = skin.row_weight;
-      section.v = part(m.v, first, rows);
-      section.w = part(m.w, first, rows);
-      section.rotation = part(m.turn, first, rows);
-      section.receiver_v = part(m.receiver, 2 * st, 1);
-      section.receiver_w = part(m.receiver, 2 * st + 1, 1);
-      const TroughShape shape = fit_shape(parabola_, section);
-      const TroughMissParts split =
-          split_miss(parabola_, section, shape, std::span<const double>(&twist, 1), out.sensor_reading);
-      append(parts[0].miss, split.twist);
-      append(parts[1].miss, split.receiver);
-      append(parts[2].miss, split.focus);
-      std::vector<double> ribs = split.residual;
-      for (std::size_t s = 0; s < ribs.size(); ++s) ribs[s] += split.tilt[s];
-      append(parts[3].miss, ribs);
-
-      const double weight = skin.station_weight[static_cast<std::size_t>(st)];
-      length += weight;
-      before += weight * shape.slope_rms * shape.slope_rms;
-      after += weight * shape.slope_rms_after * shape.slope_rms_after;
-      out.focal_change = keep_greater(out.focal_change, shape.focal_change);
-      out.focal_shift = keep_greater(out.focal_shift, shape.focal_line_w);
-      look_at_receiver(m.receiver.segment<2>(2 * st), m.vertex.segment<2>(2 * st), twist, out);
-      for (int r : {0, rows - 1}) {
-        const double rim = skin.row_y[static_cast<std::size_t>(r)];
-        const double v = m.v[first + r] - m.vertex[2 * st] + twist * parabola_.height(rim);
-        const double w = m.w[first + r] - m.vertex[2 * st + 1] - twist * rim;
-        const fem::Vec3 normal = area_normal(rim, parabola_.focal_length).normalized();
-        out.rim_deflection = keep_greater(out.rim_deflection, v * normal.y() + w * normal.z());
-      }
-      for (int s = first; s < first + rows; ++s) {
-        along += weight_[static_cast<std::size_t>(s)] * m.along[s] * m.along[s];
-        area += weight_[static_cast<std::size_t>(s)];
-      }
-    }
-    out.slope = std::fmax(out.slope, std::sqrt(after / length));
-    out.slope_before = std::fmax(out.slope_before, std::sqrt(before / length));
-    const int first = i * skin.stations * rows, count = skin.stations * rows;
-    out.module_intercept.push_back(intercept_.mean(
-        part(miss, first, count), std::span<const double>(weight_).subspan(static_cast<std::size_t>(first),
-                                                                           static_cast<std::size_t>(count))));
-    if (out.module_intercept.back() < out.module_intercept[static_cast<std::size_t>(out.worst_module)])
-      out.worst_module = i;
+    const auto along = station_weight_.segment(i * skin.stations, skin.stations);
+    const auto rms = [&](const RowVectorXd& square) {
+      return std::sqrt(square.segment(i * skin.stations, skin.stations).dot(along) / along.sum());
+    };
+    out.slope = std::fmax(out.slope, rms(after));
+    out.slope_before = std::fmax(out.slope_before, rms(before));
   }
-  out.slope_along = std::sqrt(along / area);
-  out.attribution = attribute(intercept_, weight_, parts);
-  return out;
+  const auto row_rms = [&](const MatrixXd& slope) {
+    return std::sqrt((share.transpose() * slope.cwiseAbs2()).dot(station_weight_) / station_weight_.sum());
+  };
+  out.slope_along = row_rms(m.along + m.panel_along);
+  out.slope_panel = row_rms(m.panel_turn);
+}
+
+// The receiver against the focus carried along by the tube (the vertex line's motion and the rotation about
+// it), and the rims against the tube.
+void OpticsCheck::look_at_receiver(const OpticalMotion& m, OpticalResult& out) const {
+  const Skin& skin = row_.collector().skin;
+  const RowVectorXd turned = m.turn.row(skin.rows / 2);
+  const RowVectorXd lateral = m.receiver.row(0) - m.vertex.row(0) + parabola_.focal_length * turned;
+  const RowVectorXd axial = m.receiver.row(1) - m.vertex.row(1);
+  Eigen::Index at = 0;
+  out.receiver_shift = std::sqrt((lateral.cwiseAbs2() + axial.cwiseAbs2()).maxCoeff(&at));
+  out.receiver_lateral = lateral[at];
+  out.receiver_axial = axial[at];
+  double most = 0;
+  for (int r : {0, skin.rows - 1}) {
+    const double y = skin.row_y[static_cast<std::size_t>(r)];
+    const fem::Vec3 normal = area_normal(y, parabola_.focal_length).normalized();
+    const RowVectorXd v = m.v.row(r) - m.vertex.row(0) + turned * parabola_.height(y);
+    const RowVectorXd w = m.w.row(r) - m.vertex.row(1) - turned * y;
+    const double rim = greatest(v * normal.y() + w * normal.z());
+    if (std::abs(rim) > std::abs(most)) most = rim;
+  }
+  out.rim_deflection = most;
 }
 
 }  // namespace focalframe::models

@@ -13,6 +13,8 @@ namespace {
 using Eigen::MatrixXd;
 using Eigen::VectorXd;
 
+}  // namespace
+
 double basis_value(Pattern b, double y, double width) {
   const double decay = loads::edge_decay * width;
   switch (b) {
@@ -39,6 +41,8 @@ double hat_value(const std::vector<double>& stations, int i, double at) {
     return std::max(0.0, (stations[k + 1] - at) / (stations[k + 1] - stations[k]));
   return 1.0;  // on the station itself, or beyond the first or last one
 }
+
+namespace {
 
 std::vector<fem::LoadCase> stand_cases() {
   fem::LoadCase weight, wind;

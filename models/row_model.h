@@ -25,6 +25,11 @@ enum class Pattern : int {
 };
 inline constexpr int basis_count = 5;
 
+/// Value of a pattern at y [-].
+double basis_value(Pattern b, double y, double width);
+/// Hat function of station i of a list of s/W at a position s/W: 1 on the station, 0 on its neighbours.
+double hat_value(const std::vector<double>& stations, int i, double at);
+
 /// Number of a load amplitude in every amplitude vector. Body columns come first, the stands' two last.
 struct Columns {
   int modules = 0, hats = 0;

@@ -170,6 +170,9 @@ void add_structure(Table& table) {
            "of the joint, coupling continuous only; rigid when left out")
       .above(0, 1e12)
       .preset("rigid");
+  plates.add("play", Q::angle, &EndPlatesInput::play, "full width of the play in each joint between modules")
+      .between(0, 10 * deg)
+      .preset("0 mrad");
 }
 
 void add_carried(Table& table) {
@@ -199,6 +202,17 @@ void add_carried(Table& table) {
            "yes: the riveted sheet holds the ribs sideways")
       .words({"no", "yes"})
       .preset("no");
+  mirror
+      .add("facets-across", Q::count, &MirrorInput::facets_across,
+           "facets: panels from rim to rim, even; each needs two lines of supports")
+      .between(0, 40)
+      .preset("one on each side");
+  mirror.add("pad-pitch", Q::length, &MirrorInput::pad_pitch, "facets on purlins: pads along the row")
+      .above(0, 5);
+  mirror
+      .add("bending-stiffness", Q::torque, &MirrorInput::bending_stiffness,
+           "of the skin per width, E t3 / 12 (1 - nu2), for sandwich or corrugated skins")
+      .above(0, 1e6);
 
   ElementMaker<ReceiverInput> receiver(
       table, "receiver", true, [](TroughDesign& d) -> ReceiverInput& { return d.receiver; },
@@ -215,6 +229,13 @@ void add_carried(Table& table) {
       .words(fluid_names());
   receiver.add("fill-density", Q::density, &ReceiverInput::fill_density, "overrides the word's density")
       .between(0.01, 20000);
+  receiver
+      .text("catches", &ReceiverInput::catches,
+            "what the light must meet: the absorbing tube, or a flat strip in the focus (secondary, cells)")
+      .words({"tube", "strip"})
+      .preset("tube");
+  receiver.add("strip-width", Q::length, &ReceiverInput::strip_width, "catches strip only: its full width")
+      .above(0, 2);
 
   ElementMaker<SleeveInput> sleeve(
       table, "receiver/sleeve", false, [](TroughDesign& d) -> SleeveInput& { return d.receiver.sleeve; },
@@ -316,6 +337,11 @@ void add_ground(Table& table) {
   sensor.text("at", &SensorInput::at, "where it sits")
       .words({"tube beside the drive"})
       .preset("tube beside the drive");
+  sensor
+      .add("module", Q::count, &SensorInput::module,
+           "inclinometer or sun sensor on this module, counted from the row's first end")
+      .between(0, 200)
+      .preset("beside the drive");
   sensor.text("correction", &SensorInput::correction, "what the tracker takes out")
       .words({"sensor", "none", "row-mean"})
       .preset("sensor");
@@ -441,8 +467,10 @@ void add_run(Table& table) {
       .between(0, 20 * mrad)
       .preset("2.6 mrad");
   optics.text("sun-shape", &OpticsInput::sun_shape, "how the sun's disc is described")
-      .words({"gaussian", "pillbox", "buie"})
+      .words({"gaussian", "pillbox", "buie", "table"})
       .preset("gaussian");
+  optics.text("sun-table", &OpticsInput::sun_table,
+              "sun-shape table only: angle from the sun's centre and radiance, such as 0 mrad 1, 4 mrad 0.9");
   optics.add("circumsolar-ratio", Q::ratio, &OpticsInput::circumsolar_ratio, "sun-shape buie only")
       .between(0, 0.8);
   optics
@@ -477,6 +505,10 @@ void add_limits(Table& table) {
   limits
       .add("receiver-shift", Q::length, &LimitsInput::receiver_shift, "receiver away from the mirror's axis")
       .above(0, 1);
+  limits
+      .add("re-aim", Q::time, &LimitsInput::re_aim,
+           "turned by hand: least time the light stays above its limit while the sun moves on")
+      .above(0, 86400);
   limits.text("strength", &LimitsInput::strength, "load factors of a standard").words({"EN 1990", "ASCE 7"});
   limits
       .add("strength-factor", Q::ratio, &LimitsInput::strength_factor,

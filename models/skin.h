@@ -22,6 +22,9 @@ struct Skin {
   std::vector<double> row_weight;           ///< projected width each row stands for [m]; sums to the aperture
   std::vector<double> station_x;            ///< all modules' stations [m]
   std::vector<double> station_weight;       ///< length each station stands for [m]
+  int stations_per_bay = 0;                 ///< bay: from rib to rib
+  double bay = 0;                           ///< its length [m]
+  std::vector<double> bay_share;            ///< where in its bay each station of a bay lies, 0 .. 1
   Eigen::SparseMatrix<double, Eigen::RowMajor>
       move;  ///< (3 #samples) x (6 #nodes): displacement x y z per sample
   Eigen::SparseMatrix<double, Eigen::RowMajor> turn;  ///< (2 #samples) x (6 #nodes): rotation of the mirror
@@ -33,6 +36,7 @@ struct Skin {
     return station * rows + row;
   }  ///< station counts over all modules
   int module_of_station(int station) const { return station / stations; }
+  int bays() const { return stations / stations_per_bay; }  ///< in one module
 };
 
 /// Height of the parabola at a row and the outward (towards the focus) normal times dA / dA_projected: (0,

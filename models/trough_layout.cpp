@@ -94,6 +94,8 @@ TroughLayout lay_out(const TroughDesign& design, int refine) {
     for (double& x : layout.post_x)
       x = *std::min_element(layout.rib_x.begin(), layout.rib_x.end(),
                             [x](double a, double b) { return std::abs(a - x) < std::abs(b - x); });
+  // A sheet that sags from rib to rib needs more stations than one that is straight between them.
+  layout.stations_per_bay = on_purlins ? 2 : 4;
   cut_arm(design, layout, refine);
   return layout;
 }

@@ -24,6 +24,7 @@ struct TroughLayout {
   std::vector<double> arm_y;   ///< arm nodes from the root (on the tube's skin) to the rim, y > 0 [m]
   std::vector<int> purlin_at;  ///< indices into arm_y
   std::vector<int> panel_at;   ///< truss: indices into arm_y, root and rim included
+  int stations_per_bay = 2;    ///< of the skin: Gauss stations between two ribs
 };
 
 /// `refine` multiplies the number of beam elements along an arm (and keeps every node of refine = 1).

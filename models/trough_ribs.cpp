@@ -3,6 +3,7 @@
 #include <cmath>
 
 #include "fem/beam.h"
+#include "models/quadrature.h"
 
 namespace focalframe::models {
 namespace {
@@ -101,7 +102,10 @@ Skin make_skin(const fem::Frame& frame, const TroughLayout& layout, const std::v
   const int per_module = static_cast<int>(ribs.size()) / modules;
   Skin skin;
   skin.modules = modules;
-  skin.stations = 2 * (per_module - 1);
+  const Quadrature along = gauss_legendre(layout.stations_per_bay, 0, 1);
+  skin.stations_per_bay = layout.stations_per_bay;
+  skin.bay_share = along.point;
+  skin.stations = layout.stations_per_bay * (per_module - 1);
   skin.rows = static_cast<int>(rows.size());
   for (const Row& row : rows) {
     skin.row_y.push_back(row.y);
@@ -118,9 +122,11 @@ Skin make_skin(const fem::Frame& frame, const TroughLayout& layout, const std::v
       ride[0].push_back(rib_motion(frame, left, row, layout.focal_length));
       ride[1].push_back(rib_motion(frame, right, row, layout.focal_length));
     }
-    for (double g : gauss) {
+    skin.bay = bay;
+    for (std::size_t at = 0; at < along.point.size(); ++at) {
+      const double g = along.point[at];
       skin.station_x.push_back(left.x + g * bay);
-      skin.station_weight.push_back(bay / 2);
+      skin.station_weight.push_back(bay * along.weight[at]);
       for (std::size_t side = 0; side < 2; ++side) {
         const double share = side == 0 ? 1 - g : g;
         const RibPart& rib = side == 0 ? left : right;

@@ -18,8 +18,9 @@ struct RibPart {
   std::array<std::vector<int>, 2> nodes;  ///< likewise, without the root (which is rigid with the tube node)
 };
 
-/// The skin over all ribs: two Gauss stations in every bay between neighbouring ribs of a module, two Gauss
-/// rows in every arm element and four over the tube. Between ribs the surface is ruled straight.
+/// The skin over all ribs: TroughLayout::stations_per_bay Gauss stations in every bay between neighbouring
+/// ribs of a module, two Gauss rows in every arm element and four over the tube. Between ribs the surface is
+/// ruled straight.
 Skin make_skin(const fem::Frame& frame, const TroughLayout& layout, const std::vector<RibPart>& ribs,
                int modules);
 

@@ -30,13 +30,14 @@ const OpticalResult& optics_at(const Assessment& a, double elevation, double fro
 
 }  // namespace
 
-TEST_CASE("at the set-true pose weight alone costs nothing", "[assess]") {
+TEST_CASE("at the set-true pose weight alone costs nothing but the sag of what carries the mirror",
+          "[assess]") {
   const Assessment a = assess(support::small_row(), support::test_table());
   const OpticalResult& r = optics_at(a, 90 * deg, 0, true);
   // The samples' own mean; the perfect trough's figure is an integral over the whole aperture.
   CHECK(r.intercept == Approx(a.undeformed).margin(2e-5));
   CHECK(r.worst_twist == Approx(0).margin(1e-12));
-  CHECK(r.slope == Approx(0).margin(1e-12));
+  CHECK(r.slope < 0.1 * mrad);
   CHECK(r.receiver_shift == Approx(0).margin(1e-12));
 }
 
