@@ -11,6 +11,7 @@
 #include "cli/report/trough_report.h"
 #include "cli/report_detail.h"
 #include "cli/report_json.h"
+#include "cli/report_optics.h"
 #include "cli/report_text.h"
 #include "cli/shipped_tables.h"
 #include "cli/write_file.h"
@@ -81,6 +82,9 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
     built = models::build_row(design, table->table);
     models::AssessOptions with_row;
     with_row.built = &built;
+    with_row.trace_rays = options.trace_rays;
+    with_row.maps = options.maps;
+    with_row.rigging = options.verbose || !options.json_path.empty() || !options.out_folder.empty();
     a = models::assess(design, table->table, with_row);
   } catch (const fem::Mechanism& mechanism) {
     Message m;
@@ -105,6 +109,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
     for (const Message& m : messages) std::fputs(to_text(m).c_str(), stderr);
     std::fputs(summary_text(a, hash).c_str(), stdout);
     if (options.verbose) std::fputs(detail_text(a).c_str(), stdout);
+    std::fputs(trace_text(a).c_str(), stdout);
   }
   if (options.strict && a.limits_missed == 0 && (!a.not_judged.empty() || warnings > 0))
     std::printf("STRICT: %zu not judged and %zu warnings count as missed.\n", a.not_judged.size(), warnings);

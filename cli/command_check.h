@@ -2,6 +2,7 @@
 
 /// `focalframe check`: the main job.
 
+#include <cstdint>
 #include <string>
 
 #include "cli/design_file.h"
@@ -16,8 +17,10 @@ struct CheckOptions {
   std::string out_folder;   ///< empty = no report
   bool quiet = false;       ///< verdict line only
   bool verbose = false;
-  bool strict = false;  ///< what was not judged and what was warned about counts as missed
-  int warnings = 0;     ///< WARN messages already printed about the design
+  bool strict = false;          ///< what was not judged and what was warned about counts as missed
+  std::int64_t trace_rays = 0;  ///< 0 = no trace
+  bool maps = false;            ///< maps of the state with the least light into the JSON
+  int warnings = 0;             ///< WARN messages already printed about the design
 };
 
 /// The design is sound (no STOP). Prints the report on standard output, writes JSON, returns the exit code.

@@ -54,6 +54,13 @@ void add_commands(CLI::App& app, Typed& typed) {
   check
       ->add_option("--out", typed.check.out_folder, "write the report (HTML, figures, tables) to this folder")
       ->type_name("FOLDER");
+  check
+      ->add_option("--trace", typed.check.trace_rays,
+                   "trace this many rays in every pose and wind, to confirm the light")
+      ->type_name("RAYS")
+      ->check(CLI::Range(std::int64_t{1000}, std::int64_t{100'000'000}));
+  check->add_flag("--maps", typed.check.maps,
+                  "slope, miss, light and flux maps of the worst state into --json");
   check->add_flag("--strict", typed.check.strict, "what is not judged or warned about counts as missed");
 
   CLI::App* draft = app.add_subcommand("draft", "write a commented design to start from");

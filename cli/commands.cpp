@@ -57,6 +57,8 @@ int run_check(const DesignCommand& command) {
   options.design_text = design.text;
   options.json_path = command.json_path;
   options.out_folder = command.out_folder;
+  options.trace_rays = command.trace_rays;
+  options.maps = command.maps;
   options.quiet = command.quiet;
   options.verbose = command.verbose;
   options.strict = command.strict;

@@ -2,6 +2,7 @@
 
 /// What each sub-command does once its words are understood. All return an exit code.
 
+#include <cstdint>
 #include <string>
 #include <vector>
 
@@ -12,7 +13,9 @@ struct DesignCommand {
   std::string json_path;   ///< empty = none
   std::string out_folder;  ///< `check` only: folder of the report; empty = none
   bool quiet = false, verbose = false, strict = false;
-  int count = 6;  ///< `modes` only: how many
+  int count = 6;                ///< `modes` only: how many
+  std::int64_t trace_rays = 0;  ///< `check` only: rays in every state; 0 = no trace
+  bool maps = false;            ///< `check` only: maps into the JSON
 };
 
 struct DraftCommand {

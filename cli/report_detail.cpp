@@ -3,6 +3,7 @@
 #include <cmath>
 
 #include "cli/messages.h"
+#include "cli/report_optics.h"
 #include "cli/report_units.h"
 #include "fem/units.h"
 #include "models/quantity.h"
@@ -170,7 +171,7 @@ std::string findings(const Assessment& a) {
 }  // namespace
 
 std::string detail_text(const Assessment& a) {
-  return geometry(a) + winds(a) + optics(a) + loads_text(a) + findings(a);
+  return geometry(a) + winds(a) + optics(a) + optics_study_text(a) + loads_text(a) + findings(a);
 }
 
 }  // namespace focalframe::cli

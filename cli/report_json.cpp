@@ -3,6 +3,8 @@
 #include <cmath>
 #include <nlohmann/json.hpp>
 
+#include "cli/report_optics.h"
+
 namespace focalframe::cli {
 namespace {
 
@@ -28,6 +30,8 @@ const char* suffix(models::Quantity q) {
       return "N";
     case models::Quantity::speed:
       return "m_s";
+    case models::Quantity::time:
+      return "s";
     default:
       return "";
   }
@@ -56,6 +60,16 @@ Json criterion(const models::Criterion& c) {
           {"note", c.note}};
 }
 
+Json trace(const models::RowTrace& t) {
+  if (t.traced.rays == 0) return nullptr;
+  return {{"rays", t.traced.rays},
+          {"intercept_ratio", number(t.traced.intercept)},
+          {"interval_99_9_ratio", {number(t.low), number(t.high)}},
+          {"analytic_ratio", number(t.analytic)},
+          {"allowance_ratio", number(t.allowance)},
+          {"agrees", t.agrees}};
+}
+
 Json optical(const models::OpticalRow& row) {
   const models::OpticalResult& r = row.result;
   Json parts = Json::array();
@@ -75,6 +89,7 @@ Json optical(const models::OpticalRow& row) {
           {"slope_rms_rad", number(r.slope)},
           {"slope_rms_before_fit_rad", number(r.slope_before)},
           {"slope_rms_along_row_rad", number(r.slope_along)},
+          {"slope_rms_panel_rad", number(r.slope_panel)},
           {"focal_change_m", number(r.focal_change)},
           {"focal_shift_m", number(r.focal_shift)},
           {"receiver_shift_m", number(r.receiver_shift)},
@@ -83,7 +98,8 @@ Json optical(const models::OpticalRow& row) {
           {"rim_deflection_m", number(r.rim_deflection)},
           {"loss_ratio", number(r.attribution.loss)},
           {"loss_parts", parts},
-          {"loss_interaction_ratio", number(r.attribution.interaction)}};
+          {"loss_interaction_ratio", number(r.attribution.interaction)},
+          {"trace", trace(row.trace)}};
 }
 
 Json winds(const Assessment& a) {
@@ -218,6 +234,7 @@ std::string trough_json(const Assessment& a, const std::string& hash) {
                       {"wind_up_speed_m_s", number(a.divergence_speed)},
                       {"wind_up_state", state(a.divergence_state)}}},
                     {"optics", optics},
+                    {"light", Json::parse(optics_study_json(a))},
                     {"strength", strength(a)},
                     {"cures", cures(a)},
                     {"proof",
