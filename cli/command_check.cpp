@@ -14,6 +14,8 @@
 #include "cli/report_optics.h"
 #include "cli/report_text.h"
 #include "cli/shipped_tables.h"
+#include "cli/stow_text.h"
+#include "cli/violation_message.h"
 #include "cli/write_file.h"
 #include "fem/mechanism.h"
 #include "models/assess.h"
@@ -24,22 +26,6 @@
 
 namespace focalframe::cli {
 namespace {
-
-Message message_of(const models::Violation& v, const Lines& lines, const std::string& file) {
-  Message m;
-  m.level = v.level == models::Violation::Level::stop   ? Level::stop
-            : v.level == models::Violation::Level::warn ? Level::warn
-                                                        : Level::note;
-  m.file = file;
-  for (const std::string& key : {v.element + "/" + v.attribute, v.element})
-    if (const auto at = lines.find(key); m.line == 0 && at != lines.end()) m.line = at->second;
-  m.head = !v.head.empty() ? v.head : v.element + (v.attribute.empty() ? "" : " " + v.attribute);
-  m.rule = v.rule;
-  m.text = v.text;
-  m.likely = v.likely;
-  m.advice = v.advice;
-  return m;
-}
 
 // A line that is overwritten while a terminal waits; nothing elsewhere.
 models::Progress progress_line(const char* what, bool quiet) {
@@ -78,6 +64,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
 
   models::Assessment a;
   models::BuiltRow built;
+  models::Trigger trigger;
   try {
     built = models::build_row(design, table->table);
     models::AssessOptions with_row;
@@ -86,6 +73,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
     with_row.maps = options.maps;
     with_row.rigging = options.verbose || !options.json_path.empty() || !options.out_folder.empty();
     a = models::assess(design, table->table, with_row);
+    trigger = models::quick_trigger(design, table->table, *built.row);
   } catch (const fem::Mechanism& mechanism) {
     Message m;
     m.file = options.design_path;
@@ -108,6 +96,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
   } else {
     for (const Message& m : messages) std::fputs(to_text(m).c_str(), stderr);
     std::fputs(summary_text(a, hash).c_str(), stdout);
+    std::fputs(stow_headline(trigger, design).c_str(), stdout);
     if (options.verbose) std::fputs(detail_text(a).c_str(), stdout);
     std::fputs(trace_text(a).c_str(), stdout);
   }
@@ -122,7 +111,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
     return false;
   };
   if (!options.json_path.empty() &&
-      !written(options.json_path, write_file(options.json_path, trough_json(a, hash))))
+      !written(options.json_path, write_file(options.json_path, trough_json(a, hash, &trigger))))
     return bad_input;
   if (!options.out_folder.empty()) {
     const auto files =

@@ -22,6 +22,7 @@ constexpr const char* examples = R"(Examples:
   focalframe check my-row.xml --json my-row.json --strict
   focalframe check my-row.xml --out my-row-report
   focalframe why receiver shift
+  focalframe stow my-row.xml --verbose
   focalframe tables
 
 Exit codes: 0 all limits met, 1 a limit is missed, 2 bad input, 3 no solution.
@@ -30,7 +31,7 @@ Exit codes: 0 all limits met, 1 a limit is missed, 2 bad input, 3 no solution.
 const std::vector<std::string> draft_kinds{"trough", "frame", "xsd"};
 
 struct Typed {
-  DesignCommand check, modes;
+  DesignCommand check, stow, modes;
   DraftCommand draft;
   FrameCommand frame;
   std::map<std::string, std::string> sizes;
@@ -62,6 +63,9 @@ void add_commands(CLI::App& app, Typed& typed) {
   check->add_flag("--maps", typed.check.maps,
                   "slope, miss, light and flux maps of the worst state into --json");
   check->add_flag("--strict", typed.check.strict, "what is not judged or warned about counts as missed");
+
+  CLI::App* stow = app.add_subcommand("stow", "wind limits, the stow trigger and what caution costs");
+  add_design(*stow, typed.stow);
 
   CLI::App* draft = app.add_subcommand("draft", "write a commented design to start from");
   draft->add_option("KIND", typed.draft.kind, "trough, frame, or xsd (for editors)")
@@ -124,6 +128,7 @@ int run(CLI::App& app, Typed& typed) {
     return all_met;
   }
   if (app.got_subcommand("check")) return run_check(typed.check);
+  if (app.got_subcommand("stow")) return run_stow(typed.stow);
   if (app.got_subcommand("modes")) return run_modes(typed.modes);
   if (app.got_subcommand("why")) return run_why(typed.why);
   if (app.got_subcommand("frame")) return run_frame(typed.frame);

@@ -11,7 +11,7 @@ namespace {
 
 using Words = std::vector<std::string>;
 
-const Words commands{"check", "draft", "frame", "modes", "tables"};
+const Words commands{"check", "stow", "draft", "frame", "modes", "tables"};
 const Words draft_kinds{"trough", "frame", "xsd"};
 
 struct Options {
@@ -20,6 +20,7 @@ struct Options {
 
 Options options_of(const std::string& command) {
   if (command == "check") return {{"--quiet", "--verbose", "--strict", "--help"}, {"--json"}};
+  if (command == "stow") return {{"--quiet", "--verbose", "--help"}, {"--json"}};
   if (command == "modes") return {{"--quiet", "--verbose", "--help"}, {"--json", "--count"}};
   if (command == "draft") {
     Options options{{"--every-field", "--help"}, {}};
@@ -154,7 +155,7 @@ Message command_line_fault(const Words& words, const std::string& reason) {
                    "--json " + std::filesystem::path(parts.free.front()).replace_extension(".json").string());
   } else if (command == "draft" && (parts.free.size() != 2 || !has(draft_kinds, parts.free.front()))) {
     draft_fault(m, words, parts);
-  } else if ((command == "check" || command == "modes") && parts.free.empty()) {
+  } else if ((command == "check" || command == "stow" || command == "modes") && parts.free.empty()) {
     missing_design(m, words, parts);
   } else if (command != "draft" && parts.free.size() > 1) {
     m.text = "One " + std::string(command == "tables" ? "table" : "design") + " at a time; \"" +

@@ -6,6 +6,7 @@
 #include "cli/command_frame.h"
 #include "cli/command_frame_file.h"
 #include "cli/command_modes.h"
+#include "cli/command_stow.h"
 #include "cli/design_file.h"
 #include "cli/exit_code.h"
 #include "cli/report/out_folder.h"
@@ -64,6 +65,20 @@ int run_check(const DesignCommand& command) {
   options.strict = command.strict;
   options.warnings = warnings_in(design);
   return run_trough_check(design.trough, design.lines, options);
+}
+
+int run_stow(const DesignCommand& command) {
+  DesignFile design;
+  if (!read_sound(command, design)) return exit_code(design.messages);
+  if (design.kind == "frame") {
+    Message m = about_file(command.design,
+                           "A frame of kind=\"frame\" has no drive, no poses and no wind table: "
+                           "there is no wind limit to look for.");
+    m.advice = "focalframe stow needs a design of kind=\"trough\"";
+    std::cerr << to_text({m}, true);
+    return bad_input;
+  }
+  return run_trough_stow(design, command);
 }
 
 int run_modes(const DesignCommand& command) {

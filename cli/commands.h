@@ -31,6 +31,7 @@ struct FrameCommand {
 };
 
 int run_check(const DesignCommand& command);
+int run_stow(const DesignCommand& command);
 int run_modes(const DesignCommand& command);
 /// Writes the built frame of a row in one pose, with its load cases, as a kind="frame" design.
 int run_frame(const FrameCommand& command);

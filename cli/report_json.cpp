@@ -179,7 +179,7 @@ Json cures(const Assessment& a) {
 
 }  // namespace
 
-std::string trough_json(const Assessment& a, const std::string& hash) {
+std::string trough_json(const Assessment& a, const std::string& hash, const models::Trigger* trigger) {
   const char* verdicts[] = {"HOLDS", "DOES NOT HOLD", "HOLDS AS FAR AS JUDGED"};
   const char* answers[] = {"yes", "no", "not judged"};
   Json questions = Json::object();
@@ -195,6 +195,13 @@ std::string trough_json(const Assessment& a, const std::string& hash) {
                        {"turns_at_si", number(g.flips_at)},
                        {"words", g.text}});
   for (const auto& r : a.remarks) remarks.push_back(r.text);
+  Json stow = nullptr;
+  if (trigger && trigger->known)
+    stow = {{"trigger_m_s", number(trigger->speed)},
+            {"meter_height_m", trigger->meter.height},
+            {"meter_averaging_s", trigger->meter.averaging},
+            {"governing", models::limit_word(trigger->basis.governing.key)},
+            {"at", state(trigger->basis.at)}};
   const Json out = {{"schema", "focalframe-trough-1"},
                     {"program_version", FOCALFRAME_VERSION},
                     {"input_hash", hash},
@@ -204,6 +211,7 @@ std::string trough_json(const Assessment& a, const std::string& hash) {
                     {"limits_missed", a.limits_missed},
                     {"questions", questions},
                     {"criteria", criteria},
+                    {"stow", stow},
                     {"not_judged", a.not_judged},
                     {"guesses", a.guesses},
                     {"deciding_guesses", guesses},

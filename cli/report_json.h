@@ -6,9 +6,12 @@
 #include <string>
 
 #include "models/assessment.h"
+#include "models/trigger.h"
 
 namespace focalframe::cli {
 
-std::string trough_json(const models::Assessment& assessment, const std::string& hash);
+/// `trigger`: the stow trigger beside it, where it was looked for.
+std::string trough_json(const models::Assessment& assessment, const std::string& hash,
+                        const models::Trigger* trigger = nullptr);
 
 }  // namespace focalframe::cli

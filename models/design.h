@@ -86,6 +86,7 @@ struct EndPlatesInput {
   double twist_stiffness = not_given;    ///< of the joint between two modules [N m/rad]; NaN = rigid
   double bending_stiffness = not_given;  ///< of the joint, coupling "continuous" only [N m/rad]; NaN = rigid
   double play = 0;                       ///< full width of the play in each joint between modules [rad]
+  double torque_capacity = not_given;    ///< design torque the joint between two modules can pass [N m]
 };
 
 struct MirrorInput {
@@ -178,6 +179,7 @@ struct WindStateInput {
 
 struct YearInput {
   bool given = false;
+  std::string record;  ///< path of an hourly record, instead of a Weibull distribution
   double weibull_scale = not_given, weibull_shape = not_given, averaging = not_given, height = not_given;
   std::string hours;  ///< "daylight" | "all"
 };
@@ -194,13 +196,28 @@ struct WindInput {
 
 struct AnemometerInput {
   double height = not_given, averaging = not_given, tolerance = 0;
+  std::string place = "free";  ///< | "among-rows"
+};
+
+/// Steps from the row's limit to the trigger that the user settles himself; NaN = models/trigger.h chooses.
+struct TriggerInput {
+  std::string from = "safety";  ///< | "light": stow already when the light falls below its limit
+  double height_factor = not_given, shelter = not_given, gust_factor = not_given;  ///< [-]
+  double growth = not_given;  ///< of the wind while it turns, > 1 [-]
+  double second = not_given;  ///< instantaneous trigger over the gust that the row bears [-]
+  double resume = not_given;  ///< resume speed over the trigger [-]
+  double dwell = not_given;   ///< below it before it resumes [s]
 };
 
 struct OperationInput {
   double track_from = not_given, track_to = not_given;  ///< elevation [rad]
   double stow_at = not_given, stow_within = not_given;  ///< [rad]
   double turning_rate = not_given;                      ///< [rad/s]
+  std::string turned_by = "drive";                      ///< | "hand"
+  double notice = not_given;  ///< by hand: from the wind rising to someone at the crank [s]
+  double push = not_given, crank = not_given, gear = 1;  ///< by hand [N], [m], crank turns per row turn [-]
   AnemometerInput anemometer;
+  TriggerInput trigger;
 };
 
 struct OpticsInput {

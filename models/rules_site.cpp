@@ -216,10 +216,7 @@ void check_weather(RuleBook& book) {
   check_speeds(book);
   check_averaging(book, "operation/anemometer", book.d.operation.anemometer.averaging);
   check_averaging(book, "wind/year", book.d.wind.year.averaging);
-  if (book.d.wind.year.given && book.d.wind.year.hours == "all")
-    book.note("wind/year", "hours",
-              "Nights are windless more often than days: a record of all hours understates the wind a "
-              "collector works in.");
+  check_run(book);
 }
 
 }  // namespace focalframe::models

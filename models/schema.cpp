@@ -173,6 +173,10 @@ void add_structure(Table& table) {
   plates.add("play", Q::angle, &EndPlatesInput::play, "full width of the play in each joint between modules")
       .between(0, 10 * deg)
       .preset("0 mrad");
+  plates
+      .add("torque-capacity", Q::torque, &EndPlatesInput::torque_capacity,
+           "design torque of the joint between two modules; left out = not judged")
+      .above(0, 1e9);
 }
 
 void add_carried(Table& table) {
@@ -412,14 +416,15 @@ void add_site(Table& table) {
       table, "wind/year", false, [](TroughDesign& d) -> YearInput& { return d.wind.year; },
       "how often the wind blows how strongly");
   year.element().presence = [](TroughDesign& d) { return &d.wind.year.given; };
-  year.add("weibull-scale", Q::speed, &YearInput::weibull_scale, "scale of a Weibull distribution")
-      .required()
+  year.add("weibull-scale", Q::speed, &YearInput::weibull_scale,
+           "scale of a Weibull distribution; or give a record")
       .above(0, 40);
   year.add("weibull-shape", Q::ratio, &YearInput::weibull_shape, "shape of a Weibull distribution")
-      .required()
       .between(0.8, 6);
   year.add("averaging", Q::time, &YearInput::averaging, "of the record").required().between(3, 3600);
   year.add("height", Q::length, &YearInput::height, "of the record").required().between(0.5, 200);
+  year.text("record", &YearInput::record,
+            "path of an hourly record, beside the design: speed, direction, beam");
   year.text("hours", &YearInput::hours, "hours the record counts").required().words({"daylight", "all"});
 }
 
@@ -442,6 +447,20 @@ void add_run(Table& table) {
       .between(0, 45 * deg);
   operation.add("turning-rate", Q::turning_rate, &OperationInput::turning_rate, "speed on the way to stow")
       .above(0, 100 * deg);
+  operation.text("turned-by", &OperationInput::turned_by, "what turns it to stow")
+      .words({"drive", "hand"})
+      .preset("drive");
+  operation.add("notice", Q::time, &OperationInput::notice, "by hand: until someone has noticed and is there")
+      .between(0, 86400);
+  operation.add("push", Q::force, &OperationInput::push, "by hand: force on the crank or lever")
+      .above(0, 5000);
+  operation.add("crank", Q::length, &OperationInput::crank, "by hand: length of the crank or lever")
+      .above(0, 5);
+  operation
+      .add("gear", Q::ratio, &OperationInput::gear,
+           "by hand: torque on the row over torque on the crank, losses in")
+      .above(0, 1e5)
+      .preset("1");
 
   ElementMaker<AnemometerInput> meter(
       table, "operation/anemometer", false,
@@ -454,6 +473,29 @@ void add_run(Table& table) {
   meter.add("tolerance", Q::speed, &AnemometerInput::tolerance, "of its reading")
       .between(0, 10)
       .preset("0 m/s");
+  meter.text("place", &AnemometerInput::place, "free of wakes, or among the rows where it reads low")
+      .words({"free", "among-rows"})
+      .preset("free");
+
+  ElementMaker<TriggerInput> trigger(
+      table, "operation/trigger", false, [](TroughDesign& d) -> TriggerInput& { return d.operation.trigger; },
+      "steps from the row's limit to the stow trigger that you settle yourself");
+  trigger.text("from", &TriggerInput::from, "stow for safety only, or as soon as the light falls short")
+      .words({"safety", "light"})
+      .preset("safety");
+  trigger
+      .add("height-factor", Q::ratio, &TriggerInput::height_factor, "gust at the meter over gust at the axis")
+      .between(0.5, 3);
+  trigger.add("shelter", Q::ratio, &TriggerInput::shelter, "meter's reading over the free wind")
+      .between(0.3, 1.2);
+  trigger.add("gust-factor", Q::ratio, &TriggerInput::gust_factor, "3 s gust over the meter's mean")
+      .between(1, 4);
+  trigger.add("growth", Q::ratio, &TriggerInput::growth, "of the wind while it turns to stow").between(1, 4);
+  trigger.add("second", Q::ratio, &TriggerInput::second, "instantaneous trigger over the gust it bears")
+      .between(0.3, 1);
+  trigger.add("resume", Q::ratio, &TriggerInput::resume, "resume speed over the trigger").between(0.2, 1);
+  trigger.add("dwell", Q::time, &TriggerInput::dwell, "below the resume speed before it resumes")
+      .between(0, 86400);
 
   ElementMaker<OpticsInput> optics(
       table, "optics", true, [](TroughDesign& d) -> OpticsInput& { return d.optics; },

@@ -46,6 +46,7 @@ void check_shape(RuleBook& book);     ///< parabola, row, tube, purlins, mirror,
 void check_parts(RuleBook& book);     ///< what each kind of rib and torque tube needs and has not
 void check_ground(RuleBook& book);    ///< pylons, drive, poses
 void check_weather(RuleBook& book);   ///< site, winds, anemometer, year
+void check_run(RuleBook& book);       ///< year, turning by hand, trigger
 void check_optics(RuleBook& book);    ///< optics, limits, accepted exceptions
 
 }  // namespace focalframe::models
