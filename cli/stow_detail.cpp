@@ -121,10 +121,12 @@ std::string price_table(const StowReport& r) {
   for (std::size_t i = 0; i < p.rows.size(); ++i) {
     const models::PriceRow& row = p.rows[i];
     const std::string wait = waits ? text_of("%7.0f h", row.hours_stowed) : "";
-    out += text_of("%s %5.1f  %8.1f h  %9s  %6.2f %%   %6.2f %%   %6.2f %%  %s\n",
+    out += text_of("%s %5.1f  %8.1f h  %9s  %6.2f %%   %6.2f %%   %6.2f %%  %s",
                    static_cast<int>(i) == p.at ? " >" : "  ", row.trigger, row.hours_above, wait.c_str(),
                    100 * row.share_stowed, 100 * row.share_lost, 100 * row.share(),
                    std::string(static_cast<std::size_t>(std::lround(16 * row.share() / most)), '#').c_str());
+    out.erase(out.find_last_not_of(' ') + 1);
+    out += "\n";
   }
   if (p.at > 0 && p.at + 1 < static_cast<int>(p.rows.size())) {
     const auto at = [&](int i) { return p.rows[static_cast<std::size_t>(i)].share(); };

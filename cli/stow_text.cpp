@@ -56,9 +56,11 @@ std::string chain_lines(const Trigger& t) {
               t.meter.hand_held ? "From the row to a meter in your hand" : "From the row to your anemometer",
               t.axis_gust, models::state_text(t.basis.kind).c_str());
   for (const models::TriggerStep& s : t.steps) {
+    // The last line is the trigger itself, rounded down.
+    const double after = &s == &t.steps.back() ? t.speed : s.after;
     const std::string by =
         s.sign == '-' ? text_of("- %.3g", s.by) : text_of("%c %.3f", s.sign == '*' ? 'x' : '/', s.by);
-    out += text_of("  %-9s%-30.30s %-16.16s%6.1f\n", by.c_str(), s.what.c_str(), s.source.c_str(), s.after);
+    out += text_of("  %-9s%-30.30s %-16.16s%6.1f\n", by.c_str(), s.what.c_str(), s.source.c_str(), after);
   }
   return out;
 }

@@ -33,8 +33,8 @@ void remark(const TroughDesign& d, const loads::CoefficientTable& table, StowRep
   }
   if (d.drive.play > 0 && std::isfinite(w.drive_reversal))
     r.remarks.push_back(
-        text("From a mean of %.1f m/s at the axis the wind turns the load of the drive round at some "
-             "tracking pose: the row tips over by its play of %.2g mrad",
+        text("At some tracking pose a mean of %.1f m/s at the axis already turns the load of the drive round "
+             "(the weight nearly balances there): the row tips over by its play of %.2g mrad",
              w.drive_reversal, d.drive.play / mrad) +
         (d.sensor.correction == "none"
              ? ", which nothing corrects and the light here does not count."
@@ -76,10 +76,11 @@ StowReport stow_report(const TroughDesign& design, const loads::CoefficientTable
   for (const StateLimit* s : {&out.limits.operate, &out.limits.turning, &out.limits.stow, &out.limits.stuck})
     out.states_missed += s->judged && !s->holds() ? 1 : 0;
   remark(design, table, out);
-  out.not_covered = {
-      "wind along the row, and what hangs from it",
-      "joints, bearings and mirror pads without a stated capacity", "the absorber against its glass sleeve",
-      "galloping, flutter and buffeting by rows upwind", "snow, ice and temperature together with wind"};
+  out.not_covered = {"wind along the row, and what hangs from it",
+                     "joints, bearings and mirror pads without a stated capacity",
+                     "the absorber against its glass sleeve",
+                     "member buckling, and galloping, flutter and buffeting by rows upwind",
+                     "snow, ice and temperature together with wind"};
   if (std::isnan(out.moving_capacity))
     out.not_covered.insert(out.not_covered.begin(), "whether the drive can move: no moving torque given");
   return out;
