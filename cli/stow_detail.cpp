@@ -161,7 +161,7 @@ std::string shift_table(const StowReport& r) {
 std::string stow_detail(const StowReport& r, const models::TroughDesign& d) {
   std::string out = map_table(r) + letters(r) + criteria_table(r, d) + ways(r);
   out += text_of(
-      "\nAt the axis: %s = %.3f; air %.3f kg/m3; size and dynamic factor %.3f on drive and its pylon\n",
+      "\nAt the axis: %s = %.3f;\n  air %.3f kg/m3; size and dynamic factor %.3f on drive and its pylon\n",
       r.limits.axis.how.c_str(), r.limits.axis.gust_over_mean, r.limits.axis.density,
       r.limits.axis.size_factor);
   out += wrapped("Light, twist, slope and receiver: 10 min mean, unfactored. Members: 3 s gust, " + r.rule +
