@@ -3,16 +3,15 @@
 #include <cmath>
 
 #include "loads/pose.h"
+#include "models/append_frame.h"
 
 namespace focalframe::models {
-namespace {
 
 using fem::Mat3;
 using fem::Vec3;
 
-// Appends `part` with its indices shifted and its vectors turned by `turn` (part axes to world) about
-// `pivot`, which comes to lie at `at`.
-void append(fem::Frame& whole, const fem::Frame& part, const Mat3& turn, const Vec3& pivot, const Vec3& at) {
+void append_frame(fem::Frame& whole, const fem::Frame& part, const Mat3& turn, const Vec3& pivot,
+                  const Vec3& at) {
   const int nodes = static_cast<int>(whole.nodes.size());
   const int sections = static_cast<int>(whole.sections.size()),
             materials = static_cast<int>(whole.materials.size());
@@ -56,20 +55,18 @@ void append(fem::Frame& whole, const fem::Frame& part, const Mat3& turn, const V
   }
 }
 
-}  // namespace
-
 FullFrame full_frame(const Collector& collector, double elevation) {
   const Mat3 turn = loads::world_to_collector(elevation).transpose();
   FullFrame full;
   std::vector<int> heads;
   for (const Stand& stand : collector.stands) {
     heads.push_back(static_cast<int>(full.frame.nodes.size()) + stand.head);
-    append(full.frame, stand.frame, Mat3::Identity(), Vec3::Zero(), Vec3(stand.x, 0, 0));
+    append_frame(full.frame, stand.frame, Mat3::Identity(), Vec3::Zero(), Vec3(stand.x, 0, 0));
   }
   full.first_body_node = static_cast<int>(full.frame.nodes.size());
   full.first_body_member = static_cast<int>(full.frame.members.size());
-  append(full.frame, collector.body, turn, Vec3(0, 0, -collector.axis_to_vertex),
-         Vec3(0, 0, collector.stands.front().height));
+  append_frame(full.frame, collector.body, turn, Vec3(0, 0, -collector.axis_to_vertex),
+               Vec3(0, 0, collector.stands.front().height));
 
   for (std::size_t k = 0; k < collector.bearings.size(); ++k) {
     const bool driven = static_cast<int>(k) == collector.drive_bearing;
