@@ -79,6 +79,18 @@ Json as_json(const models::RowStability& s) {
 
 }  // namespace
 
+std::string stability_text(const std::string& name, const std::vector<models::RowStability>& poses) {
+  std::string text = name + ": how it swings and where it would buckle\n";
+  for (const models::RowStability& s : poses) text += in_words(s);
+  return text;
+}
+
+std::string stability_json(const std::string& name, const std::vector<models::RowStability>& poses) {
+  Json all = {{"schema", "focalframe-modes-1"}, {"name", name}, {"poses", Json::array()}};
+  for (const models::RowStability& s : poses) all["poses"].push_back(as_json(s));
+  return all.dump(1) + "\n";
+}
+
 int run_trough_modes(const DesignFile& design, const DesignCommand& command) {
   std::vector<Message> messages;
   Message place;
@@ -94,19 +106,16 @@ int run_trough_modes(const DesignFile& design, const DesignCommand& command) {
   if (std::isfinite(design.trough.operation.stow_at) &&
       std::abs(design.trough.operation.stow_at - poses[0]) > 1e-9)
     poses.push_back(design.trough.operation.stow_at);
-  std::string text = design.trough.name + ": how it swings and where it would buckle\n";
-  Json all = {{"schema", "focalframe-modes-1"}, {"name", design.trough.name}, {"poses", Json::array()}};
-  for (double pose : poses) {
-    const models::RowStability s = models::row_stability(design.trough, table->table, pose, command.count);
-    text += in_words(s);
-    all["poses"].push_back(as_json(s));
-  }
+  std::vector<models::RowStability> found;
+  for (double pose : poses)
+    found.push_back(models::row_stability(design.trough, table->table, pose, command.count));
   if (!command.json_path.empty())
-    if (const std::string problem = write_file(command.json_path, all.dump(1) + "\n"); !problem.empty()) {
+    if (const std::string problem = write_file(command.json_path, stability_json(design.trough.name, found));
+        !problem.empty()) {
       std::fprintf(stderr, "%s\n", problem.c_str());
       return bad_input;
     }
-  if (!command.quiet) std::fputs(text.c_str(), stdout);
+  if (!command.quiet) std::fputs(stability_text(design.trough.name, found).c_str(), stdout);
   return all_met;
 }
 

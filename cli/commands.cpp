@@ -3,6 +3,7 @@
 #include <iostream>
 
 #include "cli/command_check.h"
+#include "cli/command_dish.h"
 #include "cli/command_frame.h"
 #include "cli/command_frame_file.h"
 #include "cli/command_modes.h"
@@ -53,6 +54,7 @@ int run_check(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
   if (design.kind == "frame") return run_frame_check(design, command);
+  if (design.kind == "dish") return run_dish_check(design, command, warnings_in(design));
   CheckOptions options;
   options.design_path = command.design;
   options.design_text = design.text;
@@ -70,6 +72,7 @@ int run_check(const DesignCommand& command) {
 int run_stow(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
+  if (design.kind == "dish") return run_dish_stow(design, command);
   if (design.kind == "frame") {
     Message m = about_file(command.design,
                            "A frame of kind=\"frame\" has no drive, no poses and no wind table: "
@@ -85,6 +88,7 @@ int run_modes(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
   if (design.kind == "frame") return run_frame_modes(design, command);
+  if (design.kind == "dish") return run_dish_modes(design, command);
   return run_trough_modes(design, command);
 }
 

@@ -11,7 +11,7 @@
 namespace focalframe::cli {
 namespace {
 
-const std::vector<std::string> kinds{"trough", "frame"};
+const std::vector<std::string> kinds{"trough", "dish", "frame"};
 
 Message& say(DesignFile& design, int line, std::string head, std::string text) {
   Message m;
@@ -27,8 +27,9 @@ bool read_kind(DesignFile& design, const XmlElement& root) {
   const XmlAttribute* kind = root.find("kind");
   if (!kind) {
     say(design, root.line, "collector without kind",
-        "The kind decides what is read: trough (built from its parts) or frame (nodes and members).")
-        .advice = "Add one of: kind=\"trough\" | kind=\"frame\"";
+        "The kind decides what is read: trough and dish (built from their parts) or frame (nodes and "
+        "members).")
+        .advice = "Add one of: kind=\"trough\" | kind=\"dish\" | kind=\"frame\"";
     return false;
   }
   if (std::find(kinds.begin(), kinds.end(), kind->value) == kinds.end()) {
@@ -36,8 +37,6 @@ bool read_kind(DesignFile& design, const XmlElement& root) {
                      "The kinds read here are " + joined_or(kinds) + ".");
     if (const std::string near = nearest_name(kind->value, kinds); !near.empty())
       m.likely = "kind=\"" + near + "\"";
-    if (kind->value == "dish")
-      m.text += " A dish can be described as kind=\"frame\", with its nodes and members.";
     return false;
   }
   design.kind = kind->value;

@@ -43,17 +43,7 @@ std::string geometry(const Assessment& a) {
 }
 
 std::string winds(const Assessment& a) {
-  std::string out = section("The wind, step by step");
-  for (const models::WindUse& use : a.winds) {
-    out += "  " + models::state_text(use.kind) + "\n";
-    for (const loads::ChainStep& step : use.at_axis.chain)
-      out += text_of("    %-34.34s %10.4g %s\n", step.what.c_str(), step.value, step.unit.c_str()) +
-             wrapped(step.how, 8);
-    out += text_of("    %-34s %10.4g %-6s for drive torque and the drive pylon\n", "size factor cs",
-                   use.size_factor, "-");
-  }
-  out += wrapped("coefficients: " + a.table + ", " + a.table_title, 2);
-  out += wrapped("confidence " + a.table_confidence + "; source: " + a.table_source, 4);
+  std::string out = wind_chain_text(a);
   out += text_of("  zone %s; greatest moment of the row about its axis %.3f q W2 L on the gust (cs in)\n",
                  a.zone.c_str(), a.row_moment_coefficient);
   if (std::isfinite(a.rated_moment_coefficient))
@@ -155,6 +145,28 @@ std::string findings(const Assessment& a) {
                  a.proof.balance, a.proof.residual, a.proof.condition, a.freedoms);
   out += text_of("  half-size rib elements change the slope by %.3f %% and the light by %.4f points\n",
                  100 * a.proof.slope_change, 100 * a.proof.intercept_change);
+  return out + closing_text(a);
+}
+
+}  // namespace
+
+std::string wind_chain_text(const Assessment& a) {
+  std::string out = section("The wind, step by step");
+  for (const models::WindUse& use : a.winds) {
+    out += "  " + models::state_text(use.kind) + "\n";
+    for (const loads::ChainStep& step : use.at_axis.chain)
+      out += text_of("    %-34.34s %10.4g %s\n", step.what.c_str(), step.value, step.unit.c_str()) +
+             wrapped(step.how, 8);
+    out += text_of("    %-34s %10.4g %-6s for drive torque and the drive pylon\n", "size factor cs",
+                   use.size_factor, "-");
+  }
+  out += wrapped("coefficients: " + a.table + ", " + a.table_title, 2);
+  out += wrapped("confidence " + a.table_confidence + "; source: " + a.table_source, 4);
+  return out;
+}
+
+std::string closing_text(const Assessment& a) {
+  std::string out;
   out += section("Not judged");
   for (const std::string& n : a.not_judged) out += wrapped(n, 2);
   out += section("Not part of this check");
@@ -167,8 +179,6 @@ std::string findings(const Assessment& a) {
       2);
   return out;
 }
-
-}  // namespace
 
 std::string detail_text(const Assessment& a) {
   return geometry(a) + winds(a) + optics(a) + optics_study_text(a) + loads_text(a) + findings(a);

@@ -12,4 +12,9 @@ namespace focalframe::cli {
 /// over elevation, ground loads, every cure, guesses, what was not checked, all cautions. ASCII, 80 columns.
 std::string detail_text(const models::Assessment& assessment);
 
+/// The wind, step by step, and the coefficient table.
+std::string wind_chain_text(const models::Assessment& assessment);
+/// What was not judged and not checked, and the cautions.
+std::string closing_text(const models::Assessment& assessment);
+
 }  // namespace focalframe::cli

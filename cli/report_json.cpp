@@ -3,6 +3,7 @@
 #include <cmath>
 #include <nlohmann/json.hpp>
 
+#include "cli/json_parts.h"
 #include "cli/report_optics.h"
 
 namespace focalframe::cli {
@@ -178,6 +179,10 @@ Json cures(const Assessment& a) {
 }
 
 }  // namespace
+
+Json number_json(double value) { return number(value); }
+Json criterion_json(const models::Criterion& c) { return criterion(c); }
+Json winds_json(const Assessment& a) { return winds(a); }
 
 std::string trough_json(const Assessment& a, const std::string& hash, const models::Trigger* trigger) {
   const char* verdicts[] = {"HOLDS", "DOES NOT HOLD", "HOLDS AS FAR AS JUDGED"};

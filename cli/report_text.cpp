@@ -121,6 +121,8 @@ std::string cure_lines(const Assessment& a, std::size_t most) {
   return out;
 }
 
+}  // namespace
+
 std::string wind_line(const Assessment& a) {
   for (const models::WindUse& use : a.winds) {
     if (use.kind != models::StateKind::operate) continue;
@@ -130,8 +132,6 @@ std::string wind_line(const Assessment& a) {
   }
   return {};
 }
-
-}  // namespace
 
 std::string verdict_line(const Assessment& a) {
   std::string tail;
@@ -148,10 +148,8 @@ std::string verdict_line(const Assessment& a) {
   return {};
 }
 
-std::string summary_text(const Assessment& a, const std::string& hash) {
-  const std::string head = text_of("%.24s: trough %.3g x %.4g m, turning %.0f kg, %.1f kg/m2", a.name.c_str(),
-                                   a.aperture, a.length, a.mass, a.mass_per_area);
-  std::string out = text_of("%-65s input %.8s\n", head.c_str(), hash.c_str()) + verdict_line(a);
+std::string questions_text(const Assessment& a, const std::string& after_focus) {
+  std::string out;
   const auto ask = [&](const char* question, int i, const char* columns) {
     std::string line = text_of("%-22s %-9s %s", question,
                                answer_text(a.answers[static_cast<std::size_t>(i)]).c_str(), columns);
@@ -159,19 +157,25 @@ std::string summary_text(const Assessment& a, const std::string& hash) {
     out += line + "\n";
   };
   ask("Keeps the focus?", 0, "limit                   decided in");
-  out += question_lines(a, Question::focus, 4) + losses(a);
-  for (std::size_t i = 0; i < std::min<std::size_t>(1, a.deciding_guesses.size()); ++i)
-    out += wrapped("decided by a guess: " + a.deciding_guesses[i].text, 2);
+  out += question_lines(a, Question::focus, 4) + after_focus;
   ask("Keeps together?", 1, "");
   out += question_lines(a, Question::together, 2);
   ask("Turns and stays put?", 2, "");
   out += question_lines(a, Question::drive, 2);
   if (a.answers[3] == Answer::not_judged)
-    out += "Stands?                not judged: no footing capacity given (loads: --verbose)\n";
-  else {
-    ask("Stands?", 3, "");
-    out += question_lines(a, Question::ground, 2);
-  }
+    return out + "Stands?                not judged: no footing capacity given (loads: --verbose)\n";
+  ask("Stands?", 3, "");
+  return out + question_lines(a, Question::ground, 2);
+}
+
+std::string summary_text(const Assessment& a, const std::string& hash) {
+  const std::string head = text_of("%.24s: trough %.3g x %.4g m, turning %.0f kg, %.1f kg/m2", a.name.c_str(),
+                                   a.aperture, a.length, a.mass, a.mass_per_area);
+  std::string out = text_of("%-65s input %.8s\n", head.c_str(), hash.c_str()) + verdict_line(a);
+  std::string after_focus = losses(a);
+  for (std::size_t i = 0; i < std::min<std::size_t>(1, a.deciding_guesses.size()); ++i)
+    after_focus += wrapped("decided by a guess: " + a.deciding_guesses[i].text, 2);
+  out += questions_text(a, after_focus);
   out += cure_lines(a, 2);
   out += wind_line(a);
   out += text_of("Proof %s = q A C to %.0e, balance %.0e; half-size elements: slope %.2g %%\n",
