@@ -53,6 +53,14 @@ int warnings_in(const DesignFile& design) {
 int run_check(const DesignCommand& command) {
   DesignFile design;
   if (!read_sound(command, design)) return exit_code(design.messages);
+  if (design.kind == "frame" && !command.out_folder.empty()) {
+    std::cerr << to_text(
+        {about_file(command.out_folder,
+                    "A report folder is made for troughs. A frame's results go to the screen and, "
+                    "with --json FILE, to a file.")},
+        true);
+    return bad_input;
+  }
   if (design.kind == "frame") return run_frame_check(design, command);
   if (design.kind == "dish") return run_dish_check(design, command, warnings_in(design));
   CheckOptions options;
