@@ -181,4 +181,8 @@ class Reader {
 
 DishFile read_dish(const DesignFile& design) { return Reader(design).run(); }
 
+std::vector<std::string> dish_attributes_with_own_units() {
+  return {"radio/frequency", "radio/edge-taper", "limits/gain-loss", "limits/pointing"};
+}
+
 }  // namespace focalframe::cli

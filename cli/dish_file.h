@@ -19,4 +19,8 @@ struct DishFile {
 /// `design.kind` is "dish". The design is valid only when there is no STOP.
 DishFile read_dish(const DesignFile& design);
 
+/// "element/attribute" of what a dish's file states in units of its own (dB, GHz, beamwidths), beside the
+/// schema.
+std::vector<std::string> dish_attributes_with_own_units();
+
 }  // namespace focalframe::cli

@@ -1,11 +1,14 @@
+#include <algorithm>
 #include <set>
 #include <string>
 
+#include "cli/dish_file.h"
 #include "cli/draft.h"
 #include "cli/draft_xml.h"
 #include "cli/escaped.h"
 #include "cli/frame_words.h"
 #include "models/schema.h"
+#include "models/schema_dish.h"
 
 namespace focalframe::cli {
 namespace {
@@ -68,15 +71,64 @@ std::string field_attribute(const models::Field& f, const std::string& indent) {
                    f.help, indent);
 }
 
-std::string trough_element(const models::Element& element, const std::string& indent) {
+// A word with the same name in both kinds of collector: the schema takes whatever either of them takes.
+models::Field merged(models::Field one, const models::Field& other) {
+  one.required = one.required && other.required;
+  if (one.quantity != other.quantity || one.words.empty() != other.words.empty()) {
+    one.quantity = Quantity::none;
+    one.words.clear();
+  }
+  for (const std::string& word : one.words.empty() ? std::vector<std::string>{} : other.words)
+    if (std::find(one.words.begin(), one.words.end(), word) == one.words.end()) one.words.push_back(word);
+  return one;
+}
+
+void merge(models::Element& into, const models::Element& other) {
+  std::vector<models::Field> fields;
+  for (const models::Field& f : into.fields) {
+    const models::Field* same = models::find_field(other, f.name);
+    fields.push_back(same ? merged(f, *same) : f);
+    fields.back().required = fields.back().required && same;
+  }
+  for (const models::Field& f : other.fields)
+    if (!models::find_field(into, f.name)) fields.push_back(f), fields.back().required = false;
+  into.fields = std::move(fields);
+}
+
+// XSD 1.0 knows one type for one name in one place, so the elements of both kinds are laid over each other.
+const std::vector<models::Element>& all_elements() {
+  static const std::vector<models::Element> all = [] {
+    std::vector<models::Element> made = models::trough_schema();
+    for (const models::Element& e : models::dish_schema()) {
+      const auto same =
+          std::find_if(made.begin(), made.end(), [&](const auto& t) { return t.path == e.path; });
+      if (same == made.end())
+        made.push_back(e);
+      else
+        merge(*same, e);
+    }
+    for (const std::string& path : dish_attributes_with_own_units())
+      for (models::Element& e : made)
+        if (path.starts_with(e.path + "/")) {
+          models::Field field;
+          field.name = path.substr(e.path.size() + 1);
+          field.help = "of an antenna";
+          e.fields.push_back(field);
+        }
+    return made;
+  }();
+  return all;
+}
+
+std::string collector_element(const models::Element& element, const std::string& indent) {
   const std::size_t slash = element.path.rfind('/');
   const bool child = slash != std::string::npos;
   std::string text = indent + "<xs:element name=\"" + element.path.substr(child ? slash + 1 : 0) + "\"" +
                      (child ? " minOccurs=\"0\"" : "") + ">\n" + indent + "  " + documentation(element.help) +
                      "\n" + indent + "  <xs:complexType>\n";
   std::string inside;
-  for (const models::Element& other : models::trough_schema())
-    if (other.path.starts_with(element.path + "/")) inside += trough_element(other, indent + "      ");
+  for (const models::Element& other : all_elements())
+    if (other.path.starts_with(element.path + "/")) inside += collector_element(other, indent + "      ");
   if (!inside.empty()) text += indent + "    <xs:all>\n" + inside + indent + "    </xs:all>\n";
   for (const models::Field& f : element.fields) text += field_attribute(f, indent + "    ");
   return text + indent + "    <xs:attribute name=\"basis\" type=\"basis\"/>\n" + indent +
@@ -123,13 +175,13 @@ std::string xsd_text() {
   text +=
       "    </xs:restriction>\n  </xs:simpleType>\n\n  <xs:element name=\"collector\">\n    "
       "<xs:complexType>\n      <xs:choice minOccurs=\"0\" maxOccurs=\"unbounded\">\n";
-  for (const models::Element& element : models::trough_schema())
-    if (element.path.find('/') == std::string::npos) text += trough_element(element, "      ");
+  for (const models::Element& element : all_elements())
+    if (element.path.find('/') == std::string::npos) text += collector_element(element, "      ");
   text += frame_element_type();
   text +=
       "      </xs:choice>\n      <xs:attribute name=\"name\" type=\"xs:string\"/>\n      <xs:attribute "
       "name=\"kind\" use=\"required\">" +
-      enumeration({"trough", "frame"}) + "</xs:attribute>\n      <xs:attribute name=\"format\">" +
+      enumeration({"trough", "dish", "frame"}) + "</xs:attribute>\n      <xs:attribute name=\"format\">" +
       enumeration({"1"}) + "</xs:attribute>\n    </xs:complexType>\n  </xs:element>\n</xs:schema>\n";
   return text;
 }

@@ -124,7 +124,7 @@ std::string extreme_lines(const FrameFile& file, const FrameCase& one) {
     if (worst.extreme.value == 0) return std::string();
     return "  " + padded(what, 22) + padded(quantity_text(worst.extreme.value, quantity), 14) + worst.axis +
            " of member " + file.frame.members[worst.member].name + " at " +
-           number(worst.extreme.at, 0, "%*.2f") + " of its length\n";
+           number(worst.extreme.at, 0, "%*.2f") + " along it\n";
   };
   return line("extreme moment", moment, Quantity::torque) +
          line("bows from its chord", bow, Quantity::length);
@@ -146,7 +146,7 @@ std::string stress_line(const FrameFile& file, const FrameCase& one) {
   if (worst < 0) return "";
   const auto place = [&](int m) {
     return "member " + file.frame.members[static_cast<std::size_t>(m)].name + " at " +
-           number(one.stresses[static_cast<std::size_t>(m)].at, 0, "%*.2f") + " of its length";
+           number(one.stresses[static_cast<std::size_t>(m)].at, 0, "%*.2f") + " along it";
   };
   std::string result =
       "  " + padded("extreme stress", 22) +
@@ -239,10 +239,10 @@ std::string frame_text(const std::string& name, const std::string& hash, const F
     text += "Frequencies             ";
     for (std::size_t i = 0; i < std::min<std::size_t>(6, modes.size()); ++i)
       text += (i > 0 ? ", " : "") + number_text(modes[i].frequency);
-    text += " Hz (shapes: focalframe modes)\n";
+    text += " Hz\n                        (shapes: focalframe modes)\n";
   }
   text += "Condition estimate " + number(results.condition_estimate, 0, "%*.1e") + ", smallest pivot " +
-          number(results.smallest_pivot_ratio, 0, "%*.1e") + " of its diagonal (a mechanism: below 1e-7)\n";
+          number(results.smallest_pivot_ratio, 0, "%*.1e") + " (below 1e-7: a mechanism)\n";
   return text + remarks(results) + caution;
 }
 

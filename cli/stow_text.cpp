@@ -124,7 +124,7 @@ std::string price_line(const StowReport& r) {
   const models::PriceRow& at = p.rows[static_cast<std::size_t>(p.at)];
   out += text_of("%.0f h above %.1f; %.0f h above %.1f; %.0f h above %.1f m/s\n", hours(p.at), at.trigger,
                  hours(p.at - 1), at.trigger - 1, hours(p.at + 1), at.trigger + 1);
-  out += text_of("  costs %.2f %% of the light stowed and %.2f %% below it (%.24s)\n", 100 * at.share_stowed,
+  out += text_of("  costs %.2f %% of the light stowed, %.2f %% below it (%.24s)\n", 100 * at.share_stowed,
                  100 * at.share_lost, p.source.c_str());
   return out;
 }

@@ -49,6 +49,7 @@ Rigging best_rigging(const OpticsCheck& check, const std::vector<double>& poses,
   std::vector<OpticalMotion> motions;
   for (double elevation : poses) motions.push_back(weighed(check, elevation));
   out.now = judge(check, motions, set_true_now);
+  if (!std::isnan(set_true_now)) out.best = out.now;
   const auto [low, high] = std::minmax_element(poses.begin(), poses.end());
   const auto better = [](const RiggingChoice& a, const RiggingChoice& b) { return a.least > b.least + 1e-9; };
   const auto try_at = [&](double angle) {

@@ -198,12 +198,12 @@ TEST_CASE("a small trough with misaim and receiver shift") {
   CHECK(mean(0.18 * deg, 0) == Approx(0.983651).margin(1e-6));
   CHECK(mean(0, 2 * mm) == Approx(0.971977).margin(1e-6));
   CHECK(mean(0.18 * deg, 2 * mm) == Approx(0.965321).margin(1e-6));
-  // The half y > 0 alone, as the one-sided integral has it.
+  // The half on which misaim and shift add up, as the one-sided integral has it.
   std::vector<double> miss, half = rule.weight;
   for (std::size_t i = 0; i < half.size(); ++i) {
     const MissTerms terms = miss_terms(p, rule.point[i]);
     miss.push_back(0.18 * deg * terms.aim + 2 * mm * terms.receiver_w);
-    if (rule.point[i] < 0) half[i] = 0;
+    if (rule.point[i] > 0) half[i] = 0;
   }
   CHECK(intercept.mean(miss, half) == Approx(0.945634).margin(1e-6));
 }
