@@ -58,7 +58,7 @@ int run_trough_check(const models::TroughDesign& design, const Lines& lines, con
   place.head = "wind table=\"" + design.wind.table + "\"";
   const auto table = find_table(design.wind.table, options.design_path, place, messages);
   if (!table || has_stop(messages)) return print_problems(messages, options.verbose);
-  for (const models::Violation& v : models::wind_rules(design, table->table))
+  for (const models::Violation& v : models::wind_rules(design, table->table, table->zone))
     messages.push_back(message_of(v, lines, options.design_path));
   if (has_stop(messages)) return print_problems(messages, options.verbose);
 

@@ -35,7 +35,7 @@ struct Typed {
   DraftCommand draft;
   FrameCommand frame;
   std::map<std::string, std::string> sizes;
-  std::string table;
+  std::string table, table_svg;
   std::vector<std::string> why;
   bool manual = false, completion = false;
 };
@@ -95,8 +95,12 @@ void add_commands(CLI::App& app, Typed& typed) {
   frame->add_option("--elevation", typed.frame.elevation, "pose, such as 45deg; 90 deg is the zenith")
       ->type_name("ANGLE");
 
-  CLI::App* tables = app.add_subcommand("tables", "wind coefficient tables: list them, or show one");
-  tables->add_option("NAME", typed.table, "name of a shipped table or path of your own")->type_name("");
+  CLI::App* tables =
+      app.add_subcommand("tables", "wind coefficient tables and load combinations: list them, or show one");
+  tables->add_option("NAME", typed.table, "name of a shipped table or set, or path of your own")
+      ->type_name("");
+  tables->add_option("--svg", typed.table_svg, "write a drawing of the coefficients to this file")
+      ->type_name("FILE");
 }
 
 ManualOption manual_option(const CLI::Option& option) {
@@ -132,7 +136,7 @@ int run(CLI::App& app, Typed& typed) {
   if (app.got_subcommand("modes")) return run_modes(typed.modes);
   if (app.got_subcommand("why")) return run_why(typed.why);
   if (app.got_subcommand("frame")) return run_frame(typed.frame);
-  if (app.got_subcommand("tables")) return run_tables(typed.table);
+  if (app.got_subcommand("tables")) return run_tables(typed.table, typed.table_svg);
   if (app.got_subcommand("draft")) {
     for (const std::string& name : draft_size_options())
       if (!typed.sizes[name].empty()) typed.draft.sizes.emplace_back(name, typed.sizes[name]);

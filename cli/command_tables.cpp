@@ -1,12 +1,16 @@
 #include <cmath>
 #include <iostream>
 
+#include "cli/combination_file.h"
 #include "cli/commands.h"
 #include "cli/embedded.h"
 #include "cli/exit_code.h"
 #include "cli/messages.h"
 #include "cli/quantity.h"
+#include "cli/read_file.h"
 #include "cli/shipped_tables.h"
+#include "cli/table_sketch.h"
+#include "cli/write_file.h"
 #include "fem/units.h"
 
 namespace focalframe::cli {
@@ -44,14 +48,43 @@ void print_table(const ReadTable& read) {
     std::cout << fixed(row.pitch / deg).substr(0, 7) << "  " << fixed(row.best.Ca) << fixed(row.best.Cs)
               << fixed(row.best.Cm) << " |" << fixed(row.upper.Ca) << fixed(row.upper.Cs)
               << fixed(row.upper.Cm) << "\n";
+  std::cout << table_sketch(t) << "What was understood\n";
   for (const std::string& line : read.understood) std::cout << line << "\n";
   for (const std::string& caution : t.cautions) std::cout << wrapped("CAUTION " + caution, 0);
 }
 
+std::optional<loads::CombinationSet> combinations_by_name(const std::string& name,
+                                                          std::vector<Message>& messages) {
+  for (const EmbeddedText& shipped : shipped_combinations())
+    if (shipped.name == name) return read_combinations_text(shipped.text, name, messages);
+  if (!name.ends_with(".xml")) return std::nullopt;
+  const FileText file = read_file(name, "table");
+  if (!file.ok || file.text.find("<combinations") == std::string::npos) return std::nullopt;
+  return read_combinations_text(file.text, name, messages);
+}
+
+void print_combinations(const loads::CombinationSet& set) {
+  std::cout << set.name << ": " << set.title << ", " << set.edition << "\n"
+            << wrapped("Source: " + set.source, 2) << "  wind from "
+            << (set.ultimate_wind_map ? "an ultimate-level map" : "a service-level map") << "; "
+            << number_text(set.on_yield) << " times yield\n"
+            << "G weight, W wind, S snow, T temperature, Q person, E earthquake; each with its factor\n";
+  const char* purposes[] = {"strength", "equilibrium", "service", "accidental", "seismic"};
+  for (const loads::Combination& c : set.combinations)
+    std::cout << "  " << padded(purposes[static_cast<int>(c.purpose)], 12) << padded(c.name, 38)
+              << loads::formula(c) << "\n";
+}
+
 }  // namespace
 
-int run_tables(const std::string& name) {
+int run_tables(const std::string& name, const std::string& svg_path) {
   std::vector<Message> messages;
+  if (const auto set = combinations_by_name(name, messages); set || has_stop(messages)) {
+    std::cerr << to_text(messages, true);
+    if (!set) return bad_input;
+    print_combinations(*set);
+    return all_met;
+  }
   if (!name.empty()) {
     Message place;
     place.file = "command line";
@@ -60,7 +93,13 @@ int run_tables(const std::string& name) {
     std::cerr << to_text(messages, true);
     if (!table) return bad_input;
     print_table(*table);
-    return all_met;
+    if (svg_path.empty()) return all_met;
+    const std::string problem = write_file(svg_path, table_svg(table->table));
+    if (problem.empty()) return all_met;
+    place.file = svg_path;
+    place.text = problem;
+    std::cerr << to_text(place);
+    return bad_input;
   }
   std::cout << "Shipped coefficient tables; `focalframe tables NAME` shows one:\n";
   for (const EmbeddedText& shipped : shipped_tables()) {
@@ -69,6 +108,10 @@ int run_tables(const std::string& name) {
               << (read ? "confidence " + read->table.confidence : std::string("cannot be read")) << "\n";
     if (read) std::cout << wrapped(read->table.title, 22);
   }
+  std::cout << "Shipped sets of load combinations (limits strength=\"...\"):\n";
+  for (const EmbeddedText& shipped : shipped_combinations())
+    if (const auto set = read_combinations_text(shipped.text, shipped.name, messages))
+      std::cout << "  " << padded(set->name, 20) << set->title << ", " << set->edition << "\n";
   std::cerr << to_text(messages, true);
   return has_stop(messages) ? bad_input : all_met;
 }

@@ -36,8 +36,9 @@ int run_modes(const DesignCommand& command);
 /// Writes the built frame of a row in one pose, with its load cases, as a kind="frame" design.
 int run_frame(const FrameCommand& command);
 int run_draft(const DraftCommand& command);
-/// Lists the shipped coefficient tables, or shows one (name or path).
-int run_tables(const std::string& name);
+/// Lists the shipped coefficient tables and sets of combinations, or shows one (name or path). `svg_path`:
+/// file for a drawing of a coefficient table; empty = none.
+int run_tables(const std::string& name, const std::string& svg_path = {});
 
 /// Says what a word of the report or of the design file means; lists the topics when no word is given.
 int run_why(const std::vector<std::string>& words);

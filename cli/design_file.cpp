@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <filesystem>
 
+#include "cli/combination_file.h"
 #include "cli/nearest.h"
 #include "cli/read_file.h"
 #include "cli/trough_messages.h"
@@ -84,6 +85,9 @@ DesignFile read_design_text(const std::string& text, const std::string& path) {
       for (Message& m : trough_messages(read, path)) design.messages.push_back(std::move(m));
       design.trough = std::move(read.design);
       design.lines = std::move(read.lines);
+      const auto strength = design.lines.find("limits/strength");
+      resolve_combinations(design.trough, path, strength == design.lines.end() ? 0 : strength->second,
+                           design.messages);
     }
     design.root = std::move(xml.root);
   }

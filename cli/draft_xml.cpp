@@ -37,6 +37,7 @@ std::string value_text(double value, const models::Field& field) {
              : value >= 60 ? plain(value / 60) + " min"
                            : plain(value) + " s";
     case Quantity::temperature:
+      if (field.most <= 200) return plain(value) + " K";  // a difference
       return plain(value - 273.15) + " degC";
     case Quantity::area:
       return plain(value / (mm * mm)) + " mm2";

@@ -13,6 +13,8 @@ struct EmbeddedText {
 
 /// models/tables, by name without ending.
 const std::vector<EmbeddedText>& shipped_tables();
+/// models/tables/combinations, likewise.
+const std::vector<EmbeddedText>& shipped_combinations();
 /// cli/report/assets and three.min.js, by file name.
 const std::vector<EmbeddedText>& report_assets();
 

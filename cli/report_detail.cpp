@@ -3,6 +3,7 @@
 #include <cmath>
 
 #include "cli/messages.h"
+#include "cli/report_actions.h"
 #include "cli/report_optics.h"
 #include "cli/report_units.h"
 #include "fem/units.h"
@@ -49,6 +50,7 @@ std::string winds(const Assessment& a) {
   if (std::isfinite(a.rated_moment_coefficient))
     out += text_of("  the drive's moving rating is worth %.3f q W2 L at the OPERATE gust\n",
                    a.rated_moment_coefficient);
+  out += worked_wind_text(a);
   if (std::isfinite(a.divergence_speed))
     out += text_of("  the row would wind itself up at a mean wind of %.1f m/s (%s)\n", a.divergence_speed,
                    models::place_text(a.divergence_state).c_str());
@@ -56,7 +58,8 @@ std::string winds(const Assessment& a) {
 }
 
 std::string optics(const Assessment& a) {
-  std::string out = section("Light, pose by pose (OPERATE, 10 min mean; twist against the sensor)");
+  std::string out = section("Light, pose by pose (OPERATE; twist against the sensor)");
+  out += "  judged in the " + a.optics_averaging + " wind, actions unfactored\n";
   out +=
       "  deg wind    pattern       light  row-mean   twist  slope  focus  recvr    rim\n"
       "                                %     aim, %    mrad   mrad     mm     mm     mm\n";
@@ -69,6 +72,7 @@ std::string optics(const Assessment& a) {
                    row.calm ? "weight only" : models::spread_text(row.spread).c_str(), 100 * r.intercept,
                    100 * r.intercept_row_mean, r.worst_twist / mrad, r.slope / mrad, r.focal_change / mm,
                    r.receiver_shift / mm, r.rim_deflection / mm);
+    if (!row.also.empty()) out.insert(out.size() - 1, "  " + row.also);
   }
   if (a.worst_light >= 0) {
     const auto& r = a.optics[static_cast<std::size_t>(a.worst_light)].result;
@@ -88,8 +92,10 @@ std::string loads_text(const Assessment& a) {
   std::string out = section("Stress, worst of each group");
   out += wrapped(a.rule, 2);
   for (const auto& [group, use] : a.strength.groups)
-    out += text_of("  %-15s %6.0f of %4.0f MPa  %-20s %s\n", group.c_str(), use.stress / MPa,
-                   use.allowed / MPa, models::place_text(use.state).c_str(), use.part.c_str());
+    out +=
+        text_of("  %-15s %6.0f of %4.0f MPa  %s\n", group.c_str(), use.stress / MPa, use.allowed / MPa,
+                models::place_text(use.state).c_str()) +
+        wrapped(use.part + "; " + use.combination + "; " + models::spread_text(use.spread) + " pattern", 18);
   if (!a.strength.buckling.empty())
     out += section("Buckling of members, worst of each group") +
            wrapped(
@@ -181,7 +187,8 @@ std::string closing_text(const Assessment& a) {
 }
 
 std::string detail_text(const Assessment& a) {
-  return geometry(a) + winds(a) + optics(a) + optics_study_text(a) + loads_text(a) + findings(a);
+  return geometry(a) + winds(a) + wind_loads_text(a) + other_actions_text(a) + optics(a) +
+         optics_study_text(a) + loads_text(a) + findings(a);
 }
 
 }  // namespace focalframe::cli

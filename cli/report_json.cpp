@@ -79,6 +79,7 @@ Json optical(const models::OpticalRow& row) {
         {{"part", p.name}, {"lost_alone_ratio", number(p.alone)}, {"won_if_mended_ratio", number(p.mended)}});
   return {{"state", state(row.state)},
           {"calm", row.calm},
+          {"also", row.also},
           {"pattern", row.calm ? "none" : models::spread_text(row.spread)},
           {"intercept_ratio", number(r.intercept)},
           {"intercept_sensor_at_drive_ratio", number(r.intercept_at_drive)},
@@ -123,6 +124,59 @@ Json winds(const Assessment& a) {
   return list;
 }
 
+Json wind_loads(const Assessment& a) {
+  Json list = Json::array();
+  for (const models::WindChainRow& r : a.wind_loads)
+    list.push_back({{"state", state(r.state)},
+                    {"gust", r.gust},
+                    {"pressure_Pa", number(r.pressure)},
+                    {"pitch_rad", number(r.pitch)},
+                    {"Ca", r.table.Ca},
+                    {"Cs", r.table.Cs},
+                    {"Cm", r.table.Cm},
+                    {"zone_Ca_ratio", r.zone.Ca},
+                    {"zone_Cs_ratio", r.zone.Cs},
+                    {"zone_Cm_ratio", r.zone.Cm},
+                    {"yaw_ratio", r.yaw_factor},
+                    {"area_m2", r.area},
+                    {"width_m", r.width},
+                    {"axial_N", number(r.axial)},
+                    {"side_N", number(r.side)},
+                    {"moment_vertex_N_m", number(r.moment_vertex)},
+                    {"moment_axis_N_m", number(r.moment_axis)},
+                    {"pattern", models::spread_text(r.spread)},
+                    {"slope_b_ratio", number(r.straight.slope)},
+                    {"rim_upwind_ratio", number(r.straight.edge_upwind)},
+                    {"rim_downwind_ratio", number(r.straight.edge_downwind)},
+                    {"residual_side_ratio", number(r.straight.residual_side)},
+                    {"thin_shell", r.thin_shell},
+                    {"receiver_drag_N", number(r.receiver)},
+                    {"tube_and_ribs_drag_N", number(r.frame)},
+                    {"pylon_drag_N", number(r.pylons)},
+                    {"along_row_N", number(r.along)},
+                    {"total_error_ratio", number(r.total_error)}});
+  return list;
+}
+
+Json actions(const Assessment& a) {
+  Json poses = Json::array(), dynamics = Json::array();
+  for (const models::ActionRow& row : a.actions)
+    poses.push_back({{"elevation_rad", row.elevation},
+                     {"snow_N_per_m", number(row.amounts.snow_per_length)},
+                     {"snow_centre_m", number(row.amounts.snow_lever)},
+                     {"water_N_per_m", number(row.amounts.water_per_length)},
+                     {"ice_kg", number(row.amounts.ice_mass)},
+                     {"earthquake_m_s2", number(row.amounts.earthquake)}});
+  for (const loads::ChainStep& s : a.dynamics.chain)
+    dynamics.push_back({{"what", s.what}, {"value", number(s.value)}, {"unit", s.unit}, {"how", s.how}});
+  return {{"poses", poses},
+          {"receiver_expansion_m", number(a.receiver_expansion)},
+          {"receiver_post_drop_m", number(a.receiver_drop)},
+          {"torsional_frequency_Hz", number(a.dynamics.frequency)},
+          {"dynamic_factor_ratio", number(a.dynamics.factor)},
+          {"dynamic_chain", dynamics}};
+}
+
 Json strength(const Assessment& a) {
   Json groups = Json::array();
   for (const auto& [group, use] : a.strength.groups)
@@ -131,7 +185,8 @@ Json strength(const Assessment& a) {
                       {"stress_Pa", number(use.stress)},
                       {"allowed_Pa", use.allowed > 0 ? Json(use.allowed) : Json(nullptr)},
                       {"state", state(use.state)},
-                      {"pattern", models::spread_text(use.spread)}});
+                      {"pattern", models::spread_text(use.spread)},
+                      {"combination", use.combination}});
   Json buckling = Json::array();
   for (const auto& [group, use] : a.strength.buckling)
     buckling.push_back({{"group", group},
@@ -151,6 +206,7 @@ Json strength(const Assessment& a) {
       feet.push_back({{"extreme_of", names[i]},
                       {"pylon", foot->stand + 1},
                       {"reaction_N_and_N_m", foot->value},
+                      {"combination", foot->combination},
                       {"state", state(foot->state)}});
   return {{"rule", a.rule},
           {"groups", groups},
@@ -242,10 +298,12 @@ std::string trough_json(const Assessment& a, const std::string& hash, const mode
                       {"source", a.table_source},
                       {"zone", a.zone},
                       {"states", winds(a)},
+                      {"loads", wind_loads(a)},
                       {"row_moment_coefficient_ratio", number(a.row_moment_coefficient)},
                       {"rated_moment_coefficient_ratio", number(a.rated_moment_coefficient)},
                       {"wind_up_speed_m_s", number(a.divergence_speed)},
                       {"wind_up_state", state(a.divergence_state)}}},
+                    {"actions", actions(a)},
                     {"optics", optics},
                     {"light", Json::parse(optics_study_json(a))},
                     {"strength", strength(a)},

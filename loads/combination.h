@@ -1,9 +1,8 @@
 #pragma once
 
-/// Combinations of actions as data. The sets below are from memory of the named editions: compare them with
-/// your own copy of the code before a design rests on them. Optical checks always use unfactored actions.
+/// Combinations of actions as data: factors on weight and on the variable actions that may act at once. The
+/// sets themselves are files (models/tables/combinations). Optical checks always use unfactored actions.
 
-#include <optional>
 #include <string>
 #include <vector>
 
@@ -19,39 +18,33 @@ enum class StateGroup {
   stuck          ///< STUCK: a pose away from stow in a reduced wind, an accidental situation
 };
 
+/// Variable actions.
+enum class Action { wind, snow, temperature, imposed, ice, wind_on_ice, seismic };
+inline constexpr int action_count = 7;
+std::string action_word(Action action);  ///< as combination files write it: "wind-on-ice"
+
 struct Combination {
   std::string name;
   Purpose purpose = Purpose::strength;
   StateGroup states = StateGroup::any;
+  Action leading = Action::wind;  ///< a combination is left out where its leading action does not occur
   // Factors on characteristic actions; 0 = not in this combination.
   double permanent = 0, wind = 0, snow = 0, temperature = 0, imposed = 0, ice = 0, wind_on_ice = 0,
          seismic = 0;
 };
+double factor_of(const Combination& combination, Action action);
 
 struct CombinationSet {
-  std::string name;                ///< "EN 1990", "ASCE 7 strength", "ASCE 7 allowable"
-  std::string edition;             ///< "2002+A1:2005", "7-16"
+  std::string name;                ///< "en-1990"
+  std::string title, edition;      ///< "EN 1990, Annex A1", "2002+A1:2005"
+  std::string source;              ///< where the factors come from and how far to trust them
   bool ultimate_wind_map = false;  ///< the map speed already contains the wind factor
+  double on_yield = 1;             ///< allowed stress over yield [-]
   std::vector<Combination> combinations;
 };
 
-/// EN 1990:2002+A1, Annex A1 with gamma 1.35 / 1.0 / 1.5, psi0 0.6 for wind and temperature, 0.5 for snow
-/// (0.7 above 1000 m), psi1 0.2 for wind.
-CombinationSet en_1990(double altitude);
-
-/// ASCE 7 load and resistance factor combinations; edition 5, 10, 16 or 22. Before 2010 the wind factor
-/// is 1.6 on a service-level map, from 2010 on 1.0 on an ultimate-level map; from 2022 on snow maps are
-/// ultimate too.
-CombinationSet asce_7_strength(int edition);
-
-/// ASCE 7 allowable-stress combinations; edition 5, 10, 16 or 22.
-CombinationSet asce_7_allowable(int edition);
-
-/// "EN 1990", "ASCE 7-16", "ASCE 7-16 allowable" ...; nullopt when unknown.
-std::optional<CombinationSet> find_combinations(const std::string& name, double altitude);
-
-/// Every name find_combinations knows.
-std::vector<std::string> combination_names();
+/// Greatest wind factor of the strength combinations; 0 without any.
+double greatest_wind_factor(const CombinationSet& set);
 
 /// A sum of effects: any quantity that is linear in the actions.
 struct Effects {

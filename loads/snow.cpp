@@ -48,11 +48,31 @@ double snow_shape_coefficient(double slope) {
   return angle < 60 ? 0.8 * (60 - angle) / 30 : 0.0;
 }
 
+double water_pressure(const Aperture& aperture, double elevation, double y) {
+  const Pool p = pool(aperture, elevation);
+  const double away = y - p.centre;
+  if (std::abs(away) >= p.half_width) return 0;
+  // Across the axis of sight the water is (r^2 - away^2) / 4f deep; the upright depth is sin(e) of it.
+  const double depth = (p.half_width * p.half_width - away * away) / (4 * aperture.focal_length);
+  return water_density * standard_gravity * depth * std::sin(elevation);
+}
+
+double snow_cover(const Aperture& aperture, double elevation, double y, SnowOnBack back, double x) {
+  const Pool p = pool(aperture, elevation);
+  const double f = aperture.focal_length;
+  // Level area per area of the aperture, < 0: the back faces up.
+  const double level = std::sin(elevation) + std::cos(elevation) * y / (2 * f);
+  if (level < 0 && back == SnowOnBack::sheds) return 0;
+  const double normal = std::sqrt(1 + (x * x + y * y) / (4 * f * f));
+  const bool in_pool = level > 0 && std::hypot(x, y - p.centre) < p.half_width;
+  const double mu =
+      in_pool ? 0.8 : snow_shape_coefficient(std::acos(std::min(1.0, std::abs(level) / normal)));
+  return mu * std::abs(level);
+}
+
 SnowArea snow_area(const Aperture& aperture, double elevation, SnowOnBack back) {
   validate(aperture);
-  const Pool p = pool(aperture, elevation);
-  const double c = std::cos(elevation), s = std::sin(elevation), w = aperture.width,
-               f = aperture.focal_length;
+  const double w = aperture.width;
   // Midpoint rule: the integrand has kinks at 30 and 60 deg, where higher rules gain nothing.
   const int n = 400, m = aperture.dish ? 400 : 1;
   double sum = 0, first = 0;
@@ -61,15 +81,7 @@ SnowArea snow_area(const Aperture& aperture, double elevation, SnowOnBack back) 
     for (int j = 0; j < m; ++j) {
       const double x = aperture.dish ? w * (-0.5 + (j + 0.5) / m) : 0;
       if (aperture.dish && x * x + y * y > w * w / 4) continue;
-      const double horizontal =
-          s + c * y / (2 * f);  // horizontal area per aperture area, < 0: the back faces up
-      if (horizontal < 0 && back == SnowOnBack::sheds) continue;
-      const double normal = std::sqrt(1 + (x * x + y * y) / (4 * f * f));
-      const double away = y - p.centre;
-      const bool in_pool = horizontal > 0 && std::hypot(x, away) < p.half_width;
-      const double mu =
-          in_pool ? 0.8 : snow_shape_coefficient(std::acos(std::min(1.0, std::abs(horizontal) / normal)));
-      const double part = mu * std::abs(horizontal) * (w / n) * (aperture.dish ? w / m : 1);
+      const double part = snow_cover(aperture, elevation, y, back, x) * (w / n) * (aperture.dish ? w / m : 1);
       sum += part;
       first += part * y;
     }

@@ -18,6 +18,8 @@ struct HeldWater {
   double amount = 0;                  ///< trough: per length [m^2]; dish: volume [m^3]
   double centre_y = 0, centre_z = 0;  ///< its centre of gravity, collector axes [m]; 0 when there is none
 };
+/// Hydrostatic pressure of that water on a trough's mirror at y [Pa]; 0 where it is dry.
+double water_pressure(const Aperture& aperture, double elevation, double y);
 HeldWater held_water(const Aperture& aperture, double elevation);
 
 /// mu_1 of EN 1991-1-3 for a slope [rad]: 0.8 up to 30 deg, straight to 0 at 60 deg.
@@ -31,6 +33,9 @@ struct SnowArea {
   double centre_y = 0;  ///< collector axes [m]; 0 when there is none
 };
 enum class SnowOnBack { sheds, holds };
+/// Shape coefficient times level area per area of the aperture at y (and x, for a dish): what SnowArea sums.
+double snow_cover(const Aperture& aperture, double elevation, double y, SnowOnBack back = SnowOnBack::sheds,
+                  double x = 0);
 SnowArea snow_area(const Aperture& aperture, double elevation, SnowOnBack back = SnowOnBack::sheds);
 
 /// Ice of uniform thickness: on both faces of a sheet [kg/m^2], around a round member [kg/m].

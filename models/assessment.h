@@ -7,14 +7,17 @@
 #include <vector>
 
 #include "loads/wind.h"
+#include "models/action_loads.h"
 #include "models/optical_maps.h"
 #include "models/optics_check.h"
 #include "models/optics_study.h"
 #include "models/rigging.h"
 #include "models/row_trace.h"
+#include "models/row_torsion.h"
 #include "models/schema.h"
 #include "models/states.h"
 #include "models/strength_check.h"
+#include "models/wind_chain.h"
 
 namespace focalframe::models {
 
@@ -44,6 +47,7 @@ struct OpticalRow {
   Spread spread = Spread::linear;
   OpticalResult result;
   RowTrace trace;  ///< only when AssessOptions asks for rays
+  std::string also;  ///< what else acts: "hottest frame", "friction +"; empty = nothing
 };
 
 /// Numbers that show the calculation is sound.
@@ -56,6 +60,12 @@ struct Proof {
   double condition = not_given;         ///< estimate, scaled stiffness [-]
   double slope_change = not_given;      ///< of the residual slope with halved elements [-]
   double intercept_change = not_given;  ///< of the governing intercept with halved elements [-]
+};
+
+/// Other actions at one elevation, as numbers for the report.
+struct ActionRow {
+  double elevation = not_given;
+  ActionAmounts amounts;
 };
 
 /// How the stated wind became what a kind of state is loaded with.
@@ -115,6 +125,14 @@ struct Assessment {
   Rigging rigging;  ///< when asked for
   StrengthResult strength;
   std::vector<WindUse> winds;
+  std::vector<WindChainRow>
+      wind_loads;                  ///< every asked state: gust and upper coefficients; OPERATE: mean as well
+  std::vector<ActionRow> actions;  ///< empty without snow, water, ice and earthquake
+  RowDynamics dynamics;            ///< only when EN Annex B was asked for
+  double optics_pressure_factor = 1;  ///< on the mean velocity pressure, for the averaging asked for [-]
+  std::string optics_averaging = "10 min mean";
+  double receiver_expansion = not_given,
+         receiver_drop = not_given;     ///< at the row's end, post drop there [m]
   double divergence_speed = not_given;  ///< of the state that comes nearest to it [m/s]
   State divergence_state;
   double row_moment_coefficient =

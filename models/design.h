@@ -11,6 +11,8 @@
 #include <string>
 #include <vector>
 
+#include "loads/combination.h"
+
 namespace focalframe::models {
 
 inline constexpr double not_given = std::numeric_limits<double>::quiet_NaN();
@@ -175,6 +177,8 @@ struct SiteInput {
 struct WindStateInput {
   bool given = false;
   double speed = not_given, averaging = not_given, height = not_given, pressure = not_given;
+  std::string over = "open country";  ///< | "site": measured over the site's own ground
+  double return_period = not_given;   ///< the stated speed is that of 50 years, this one is wanted [years]
 };
 
 struct YearInput {
@@ -187,11 +191,66 @@ struct YearInput {
 struct WindInput {
   std::string table;  ///< name of a shipped table or path of a user's
   std::string zone;   ///< no default
-  WindStateInput operate, turning, stow, stuck;
+  WindStateInput operate, turning, stow, stuck, unfinished;
   YearInput year;
   double dynamic_factor = 1.0;
+  std::string
+      dynamic_word;       ///< "EN Annex B": from the first torsional frequency; then the number is not used
+  double damping = 0.05;  ///< logarithmic decrement of the structure, for EN Annex B [-]
+  std::string map;        ///< "service" | "ultimate": level of the stated speeds; empty = not said
+  bool altitude_in_speed = false;   ///< the stated speeds are already reduced for the site's altitude
+  bool faces_open_ground = false;   ///< no row stands upwind
+  bool along_row = true;            ///< STOW also in oblique wind and in wind along the row
   bool size_factor = true;          ///< EN size factor for drive and foundation
   double moment_slope = not_given;  ///< overrides dCm/dp of the table [1/rad]
+};
+
+/// Drag of what the mirror does not hide; NaN = by the shape of the profile.
+struct BareMembersInput {
+  double tube = not_given, ribs = 2.0, receiver = 1.2, posts = not_given, pylons = not_given;  ///< [-]
+  std::string shielding = "mirror";  ///< | "none" | "all": how far the mirror shelters tube and ribs
+  std::string back = "ribbed";       ///< | "smooth" | "rough": back of the mirror in wind along the row
+};
+
+struct SnowInput {
+  double on_ground = not_given;  ///< characteristic load on level ground [Pa]
+  std::string back = "sheds";    ///< | "holds"
+};
+
+struct WaterInput {
+  std::string drains;  ///< "open" | "blocked": then a face-up mirror holds water up to its lower rim
+};
+
+struct IceInput {
+  double thickness = not_given;  ///< [m]
+  double wind_share = 0.4;       ///< of the state's velocity pressure that blows on the iced collector [-]
+};
+
+struct TemperatureInput {
+  double set_at = not_given, least = not_given, most = not_given;  ///< of the frame [K]
+  double across_frame = 0;         ///< mirror side of tube and ribs warmer than their back by [K]
+  double across_receiver = 0;      ///< sunlit side of the receiver warmer than its other side by [K]
+  double receiver_at = not_given;  ///< hottest mean temperature of the receiver [K]
+};
+
+struct EarthquakeInput {
+  std::string code = "EN 1998";               ///< | "ASCE 7"
+  double ground_acceleration = not_given;     ///< EN: a_g, importance included [m/s^2]
+  std::string ground = "B";                   ///< EN: A .. E
+  double behaviour = 1.5;                     ///< EN: q [-]
+  double s_ds = not_given, s_d1 = not_given;  ///< ASCE [-]
+  double response = 1.25, importance = 1;     ///< ASCE: R, I_e [-]
+  double period = not_given;                  ///< of the first mode [s]; NaN: the worst of all periods
+};
+
+struct MaintenanceInput {
+  double load = not_given;  ///< a person with tools, a ladder, a washer [N]
+  double at = not_given;    ///< elevation of the service pose [rad]
+};
+
+struct ErectionInput {
+  double at = not_given;         ///< elevation in which the unfinished row is left [rad]
+  std::string mirrors = "none";  ///< | "one side" | "all"
 };
 
 struct AnemometerInput {
@@ -231,17 +290,18 @@ struct OpticsInput {
   double mirror_scatter = 0;          ///< rms of the reflected ray [rad]
   double tracking = 0;                ///< rms of the collector's aim [rad]
   double incidence = 0;               ///< longitudinal incidence angle the light is judged at [rad]
+  double wind_averaging = 600;        ///< mean wind the light is judged in [s]
 };
 
 /// NaN or empty = reported, not judged.
 struct LimitsInput {
-  double intercept = not_given;        ///< least light caught, row mean [-]
-  double lost_to_frame = not_given;    ///< most light lost to the bent frame, against undeformed [-]
-  double slope = not_given;            ///< residual slope rms [rad]
-  double twist = not_given;            ///< greatest module twist against the sensor [rad]
-  double receiver_shift = not_given;   ///< [m]
-  double re_aim = not_given;           ///< shortest time between two turns by hand [s]
-  std::string strength;                ///< "EN 1990" | "ASCE 7" | "" ; or
+  double intercept = not_given;       ///< least light caught, row mean [-]
+  double lost_to_frame = not_given;   ///< most light lost to the bent frame, against undeformed [-]
+  double slope = not_given;           ///< residual slope rms [rad]
+  double twist = not_given;           ///< greatest module twist against the sensor [rad]
+  double receiver_shift = not_given;  ///< [m]
+  double re_aim = not_given;          ///< shortest time between two turns by hand [s]
+  std::string strength;  ///< set of combinations: "EN 1990", "ASCE 7", a shipped name, a path; "" ; or
   double strength_factor = not_given;  ///< plain factor on yield, unfactored actions [-]
 };
 
@@ -265,10 +325,19 @@ struct TroughDesign {
   SensorInput sensor;
   SiteInput site;
   WindInput wind;
+  BareMembersInput bare_members;
+  SnowInput snow;
+  WaterInput water;
+  IceInput ice;
+  TemperatureInput temperature;
+  EarthquakeInput earthquake;
+  MaintenanceInput maintenance;
+  ErectionInput erection;
   OperationInput operation;
   OpticsInput optics;
   LimitsInput limits;
   std::vector<AcceptInput> accepted;
+  loads::CombinationSet combinations;  ///< what limits.strength names; empty when it names none
 
   std::map<std::string, Basis> basis;  ///< element path ("receiver/posts") -> how it is known
 };

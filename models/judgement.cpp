@@ -29,12 +29,16 @@ std::string where(const OpticalRow& row) {
   return format("OPERATE %.0f deg, calm", row.state.elevation / deg);
 }
 
+std::string alongside(const OpticalRow& row) { return row.also.empty() ? "" : ", " + row.also; }
+
 void judge_focus(const TroughDesign& d, Assessment& a) {
   const LimitsInput& limits = d.limits;
   const auto add = [&](const char* key, const char* name, Quantity q, double value, double limit,
                        bool at_least, const OpticalRow& row) {
     Criterion c{Question::focus, key, name, q, value, limit, at_least, where(row), {}};
-    c.note = row.calm ? "weight only" : "10 min mean wind, " + spread_text(row.spread) + " pattern";
+    c.note =
+        (row.calm ? "weight only" : a.optics_averaging + " wind, " + spread_text(row.spread) + " pattern") +
+        alongside(row);
     a.criteria.push_back(c);
   };
   if (a.worst_light < 0) return;
@@ -66,7 +70,7 @@ void judge_strength(const TroughDesign& d, Assessment& a) {
         Question::together,    "stress " + group, group, Quantity::pressure, use.stress, not_given, false,
         place_text(use.state), use.part};
     if (judged && known) c.limit = use.allowed;
-    c.note = use.part + ", 3 s gust, " + spread_text(use.spread) + " pattern";
+    c.note = use.part + ", 3 s gust, " + spread_text(use.spread) + " pattern, " + use.combination;
     a.criteria.push_back(c);
     if (judged && !known) a.not_judged.push_back(group + ": its yield stress is not known");
   }
@@ -98,7 +102,7 @@ void judge_drive(const TroughDesign& d, Assessment& a) {
   const auto add = [&](const char* key, const char* name, const TorqueUse& use, double limit) {
     Criterion c{Question::drive,       key, name, Quantity::torque, std::abs(use.torque), limit, false,
                 place_text(use.state), {}};
-    c.note = "3 s gust with size factor, " + spread_text(use.spread) + " pattern";
+    c.note = "3 s gust with size factor, " + spread_text(use.spread) + " pattern, " + use.combination;
     a.criteria.push_back(c);
   };
   add("moving-torque", "drive, moving", a.strength.moving, d.drive.moving_torque);
@@ -275,9 +279,19 @@ void judge(const TroughDesign& design, Assessment& a) {
   a.not_checked = {"joints, welds, bolts, bearings and mirror pads",
                    "stress of mirror sheet or glass between its supports",
                    "local buckling of thin walls, buckling of the frame as a whole",
-                   "fatigue, temperature, snow, ice, earthquake",
-                   "wind along the row and oblique wind",
+                   "fatigue",
                    "row ends and shading of the receiver (shown beside the light, not in it)"};
+  const auto left_out = [&](bool given, const char* what) {
+    if (!given) a.not_checked.push_back(what);
+  };
+  left_out(!std::isnan(design.temperature.set_at), "temperature (no <temperature>)");
+  left_out(!std::isnan(design.snow.on_ground), "snow (no <snow>)");
+  left_out(!design.water.drains.empty(), "water standing in the mirror (no <water>)");
+  left_out(!std::isnan(design.ice.thickness), "ice (no <ice>)");
+  left_out(!std::isnan(design_acceleration(design.earthquake)), "earthquake (no <earthquake>)");
+  left_out(!std::isnan(design.maintenance.load), "people and vehicles touching it (no <maintenance>)");
+  left_out(design.wind.unfinished.given, "the row while it is being built (no <wind><unfinished>)");
+  left_out(design.wind.along_row, "wind along the row and oblique wind (along-row=\"no\")");
   remark(design, a);
   caution(design, a, a.cautions);
 }

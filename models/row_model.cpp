@@ -26,6 +26,8 @@ double basis_value(Pattern b, double y, double width) {
       return std::exp(-(width / 2 - y) / decay);
     case Pattern::edge_minus:
       return std::exp(-(width / 2 + y) / decay);
+    case Pattern::half_plus:
+      return y > 0 ? 1 : 0;
     case Pattern::line:
       return 0;
   }
@@ -45,10 +47,13 @@ double hat_value(const std::vector<double>& stations, int i, double at) {
 namespace {
 
 std::vector<fem::LoadCase> stand_cases() {
-  fem::LoadCase weight, wind;
+  fem::LoadCase weight, wind, along, push_x, push_y;
   weight.gravity = {0, 0, -1};
   wind.lines = {{.member = 0, .at_from = fem::Vec3::UnitY(), .at_to = fem::Vec3::UnitY()}};
-  return {weight, wind};
+  along.lines = {{.member = 0, .at_from = fem::Vec3::UnitX(), .at_to = fem::Vec3::UnitX()}};
+  push_x.gravity = fem::Vec3::UnitX();
+  push_y.gravity = fem::Vec3::UnitY();
+  return {weight, wind, along, push_x, push_y};
 }
 
 fem::Condensed condense_stand(const Stand& stand) {
@@ -59,10 +64,11 @@ fem::Condensed condense_stand(const Stand& stand) {
 
 }  // namespace
 
-RowModel::RowModel(Collector collector, std::vector<double> stations)
-    : collector_(std::move(collector)), stations_(std::move(stations)) {
+RowModel::RowModel(Collector collector, std::vector<double> stations, UnitCases units)
+    : collector_(std::move(collector)), units_(std::move(units)), stations_(std::move(stations)) {
   columns_.modules = static_cast<int>(collector_.modules.size());
   columns_.hats = static_cast<int>(stations_.size());
+  columns_.units = units_.columns();
   const fem::MassSummary mass = fem::total_mass(collector_.body);
   body_mass = mass.mass;
   body_centre = mass.centre;
@@ -78,6 +84,8 @@ RowModel::RowModel(Collector collector, std::vector<double> stations)
   }
   MatrixXd loads = body_loads();
   loads.leftCols(4) = fem::assemble_loads(collector_.body, members);
+  const int unit_cases = static_cast<int>(units_.cases.size());
+  loads.middleCols(columns_.unit(0), unit_cases) = fem::assemble_loads(collector_.body, units_.cases);
 
   std::vector<fem::Freedom> kept;
   for (const Bearing& b : collector_.bearings) {
@@ -112,13 +120,15 @@ RowModel::RowModel(Collector collector, std::vector<double> stations)
 
   MatrixXd fixed = MatrixXd::Zero(12 * static_cast<int>(collector_.body.members.size()), loads.cols());
   fixed.leftCols(4) = fem::assemble_fixed_end_forces(collector_.body, members);
+  fixed.middleCols(columns_.unit(0), unit_cases) =
+      fem::assemble_fixed_end_forces(collector_.body, units_.cases);
   make_outputs(fixed);
   loads_ = std::move(loads);
   make_fold();
 }
 
-// Columns of the pressure patterns through the transposed skin operator; the first four columns are left
-// empty.
+// Columns of the pressure patterns, of snow and water through the transposed skin operator; the first four
+// columns and those of UnitCases::cases are left empty.
 MatrixXd RowModel::body_loads() {
   const Skin& skin = collector_.skin;
   const double width = collector_.width, f = collector_.focal_length;
@@ -155,7 +165,8 @@ MatrixXd RowModel::body_loads() {
   };
   for (int m = 0; m < columns_.modules; ++m) {
     const int from = m * skin.stations, to = from + skin.stations;
-    for (const Pattern b : {Pattern::uniform, Pattern::linear, Pattern::edge_plus, Pattern::edge_minus})
+    for (const Pattern b :
+         {Pattern::uniform, Pattern::linear, Pattern::edge_plus, Pattern::edge_minus, Pattern::half_plus})
       spread(columns_.basis(m, b), from, to, [&](double y) { return basis_value(b, y, width); });
     VectorXd line = VectorXd::Zero(3 * skin.modules * skin.stations);
     for (int st = from; st < to; ++st)
@@ -166,6 +177,17 @@ MatrixXd RowModel::body_loads() {
   for (int i = 0; i < columns_.hats; ++i)
     spread(columns_.hat(i), 0, skin.modules * skin.stations,
            [&](double y) { return hat_value(stations_, i, y / width); });
+  for (int i = 0; i < static_cast<int>(units_.heap_stations.size()); ++i)
+    for (int axis = 0; axis < 2; ++axis) {
+      VectorXd force = VectorXd::Zero(3 * samples);
+      for (int st = 0; st < skin.modules * skin.stations; ++st)
+        for (int r = 0; r < skin.rows; ++r)
+          force[3 * skin.sample(st, r) + 1 + axis] =
+              skin.station_weight[static_cast<std::size_t>(st)] *
+              skin.row_weight[static_cast<std::size_t>(r)] *
+              hat_value(units_.heap_stations, i, skin.row_y[static_cast<std::size_t>(r)] / width);
+      loads.col(heap(i, axis == 1)) = skin.move.transpose() * force;
+    }
   return loads;
 }
 
@@ -240,14 +262,15 @@ void RowModel::make_fold() {
   std::vector<std::vector<int>> sums;
   const auto alone = [&](int column) { sums.push_back({column}); };
   for (int c = 0; c < 4; ++c) alone(c);
-  for (const Pattern b : {Pattern::uniform, Pattern::edge_plus, Pattern::edge_minus, Pattern::line}) {
+  for (const Pattern b : {Pattern::edge_plus, Pattern::edge_minus, Pattern::line}) {
     sums.emplace_back();
     for (int m = 0; m < columns_.modules; ++m) sums.back().push_back(columns_.basis(m, b));
   }
-  for (int m = 0; m < columns_.modules; ++m) alone(columns_.basis(m, Pattern::linear));
+  for (const Pattern b : {Pattern::uniform, Pattern::linear, Pattern::half_plus})
+    for (int m = 0; m < columns_.modules; ++m) alone(columns_.basis(m, b));
   for (int i = 0; i < columns_.hats; ++i) alone(columns_.hat(i));
-  alone(columns_.stand_gravity());
-  alone(columns_.stand_wind());
+  for (int i = 0; i < columns_.units; ++i) alone(columns_.unit(i));
+  for (int i = 0; i < Columns::stand; ++i) alone(columns_.stand_gravity() + i);
   fold_ = MatrixXd::Zero(columns_.all(), static_cast<int>(sums.size()));
   for (std::size_t s = 0; s < sums.size(); ++s) {
     fold_column_.push_back(sums[s][0]);
@@ -272,7 +295,7 @@ MatrixXd RowModel::evaluate(const LinearOutput& output, const PoseModel& pose,
 
 MatrixXd RowModel::evaluate_stand(int k, const PoseModel& pose, const MatrixXd& amplitudes) const {
   const LinearOutput& post = stand_posts_[static_cast<std::size_t>(k)];
-  return post.held * amplitudes.bottomRows(2) +
+  return post.held * amplitudes.bottomRows(Columns::stand) +
          post.joint * (pose.head_motion.middleRows(6 * k, 6) * amplitudes);
 }
 
@@ -299,7 +322,7 @@ PoseModel RowModel::pose(double elevation) const {
   for (int k = 0; k < stands; ++k) {
     const fem::Condensed& stand = stands_[static_cast<std::size_t>(k)];
     K.block<6, 6>(6 * k, 6 * k) += stand.stiffness;
-    rhs.block(6 * k, columns_.stand_gravity(), 6, 2) += stand.load;
+    rhs.block(6 * k, columns_.stand_gravity(), 6, Columns::stand) += stand.load;
   }
   if (!rigid_drive) {
     const double kd = collector_.drive_stiffness;

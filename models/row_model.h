@@ -12,6 +12,7 @@
 #include "fem/condensed.h"
 #include "loads/coefficients.h"
 #include "models/collector.h"
+#include "models/unit_cases.h"
 
 namespace focalframe::models {
 
@@ -22,25 +23,31 @@ enum class Pattern : int {
   edge_plus,   ///< exp(-(W/2 - y) / (0.2 W)): peak at the +y rim
   edge_minus,  ///< exp(-(W/2 + y) / (0.2 W)): peak at the -y rim
   line,        ///< force W per length along +y at the vertex line
+  half_plus,   ///< 1 for y > 0
 };
-inline constexpr int basis_count = 5;
+inline constexpr int basis_count = 6;
 
 /// Value of a pattern at y [-].
 double basis_value(Pattern b, double y, double width);
 /// Hat function of station i of a list of s/W at a position s/W: 1 on the station, 0 on its neighbours.
 double hat_value(const std::vector<double>& stations, int i, double at);
 
-/// Number of a load amplitude in every amplitude vector. Body columns come first, the stands' two last.
+/// Number of a load amplitude in every amplitude vector. Body columns come first, the stands' five last.
 struct Columns {
-  int modules = 0, hats = 0;
+  int modules = 0, hats = 0, units = 0;
   static constexpr int gravity_y = 0, gravity_z = 1;    ///< acceleration along collector y, z [m/s^2]
   static constexpr int receiver_y = 2, receiver_z = 3;  ///< line load on the receiver [N/m]
   int basis(int module, Pattern b) const { return 4 + basis_count * module + static_cast<int>(b); }  ///< [Pa]
   int hat(int i) const { return 4 + basis_count * modules + i; }  ///< whole row, profile station i [Pa]
-  int body() const { return 4 + basis_count * modules + hats; }
-  int stand_gravity() const { return body(); }   ///< downwards [m/s^2]
-  int stand_wind() const { return body() + 1; }  ///< line load along +Y on every post [N/m]
-  int all() const { return body() + 2; }
+  int unit(int number) const { return 4 + basis_count * modules + hats + number; }  ///< of UnitCases
+  int body() const { return 4 + basis_count * modules + hats + units; }
+  static constexpr int stand = 5;                  ///< columns of the stands, all alike
+  int stand_gravity() const { return body(); }     ///< downwards [m/s^2]
+  int stand_wind() const { return body() + 1; }    ///< line load along +Y on every post [N/m]
+  int stand_wind_x() const { return body() + 2; }  ///< along +X [N/m]
+  int stand_push_x() const { return body() + 3; }  ///< their masses pushed along +X [m/s^2]
+  int stand_push_y() const { return body() + 4; }  ///< along +Y [m/s^2]
+  int all() const { return body() + stand; }
 };
 
 /// What a pressure of 1 Pa does to a module as a whole: force along -z over area, along +y over area, moment
@@ -66,12 +73,17 @@ struct PoseModel {
 
 class RowModel {
  public:
-  /// `stations`: s/W of a table's net-pressure profiles, empty for none.
-  RowModel(Collector collector, std::vector<double> stations);
+  /// `stations`: s/W of a table's net-pressure profiles, empty for none. `units`: what else may act.
+  RowModel(Collector collector, std::vector<double> stations, UnitCases units = {});
 
   const Collector& collector() const { return collector_; }
   const Columns& columns() const { return columns_; }
   const std::vector<double>& hat_stations() const { return stations_; }
+  const UnitCases& units() const { return units_; }
+  /// Column of a hat of snow or water; along z when `upright`, else along y.
+  int heap(int station, bool upright) const {
+    return columns_.unit(static_cast<int>(units_.cases.size()) + 2 * station + (upright ? 1 : 0));
+  }
   PoseModel pose(double elevation) const;
 
   /// Integrals of a body pressure column over one module (hats: their share on it).
@@ -124,6 +136,7 @@ class RowModel {
   void make_outputs(const Eigen::MatrixXd& fixed_ends);
 
   Collector collector_;
+  UnitCases units_;
   Columns columns_;
   std::vector<double> stations_, module_area_;
   fem::Condensed body_;

@@ -27,14 +27,16 @@ WindOnRow RowWinds::at(double elevation, double wind_from, Spread spread, double
   const loads::Coefficients c = loads::coefficients_at(table_, pitch, upper).value();
   WindOnRow wind;
   wind.wind_from = wind_from;
-  wind.coefficients = {c.Ca * zone_.Ca, c.Cs * zone_.Cs, c.Cm * zone_.Cm};
+  const double yaw = loads::yaw_factor(loads::yaw(wind_from));
+  wind.coefficients = {c.Ca * zone_.Ca * yaw, c.Cs * zone_.Cs * yaw, c.Cm * zone_.Cm * yaw};
+  wind.bare_members = !table_.includes_frame;
   wind.spread = spread;
   if (spread == Spread::profile) {
     wind.profile = loads::profile_at(table_, pitch, upper);
-    for (double& p : wind.profile) p *= zone_.Ca;
+    for (double& p : wind.profile) p *= zone_.Ca * yaw;
     if (wind.profile.empty()) wind.spread = Spread::linear;
   }
-  wind.moment_slope = moment_slope(pitch);
+  wind.moment_slope = moment_slope(pitch) * yaw;
   wind.pressure = pressure;
   return wind;
 }

@@ -22,6 +22,7 @@ class RowWinds {
   RowWinds(const TroughDesign& design, const loads::CoefficientTable& table);
 
   const loads::CoefficientTable& table() const { return table_; }
+  const loads::ZoneFactors& zone() const { return zone_; }
 
   /// dCm/dp at a pitch, zone in; the design's own value where it states one [1/rad].
   double moment_slope(double pitch) const;

@@ -1,6 +1,7 @@
 #include <cmath>
 
 #include "fem/units.h"
+#include "loads/guards.h"
 #include "models/schema_rules.h"
 
 namespace focalframe::models {
@@ -20,10 +21,9 @@ void check_year(RuleBook& book) {
                  "The year needs weibull-scale and weibull-shape, or an hourly \"record\".")
         .advice = "Write weibull-scale=\"... m/s\" weibull-shape=\"2\", or record=\"my-hours.csv\"";
   }
-  if (year.hours == "all" && year.record.empty())
-    book.note("wind/year", "hours",
-              "Nights are windless more often than days: a record of all hours understates the wind a "
-              "collector works in.");
+  if (year.record.empty())
+    if (const loads::Opinion o = loads::guard_hours(year.hours != "all"))
+      book.warn("wind/year", "hours", o->text).advice = o->fix;
 }
 
 void check_hand(RuleBook& book) {

@@ -1,8 +1,11 @@
 #include <algorithm>
 #include <cmath>
+#include <stdexcept>
 
 #include "fem/units.h"
+#include "loads/guards.h"
 #include "models/schema_rules.h"
+#include "models/states.h"
 
 namespace focalframe::models {
 namespace {
@@ -84,12 +87,19 @@ void check_poses(RuleBook& book) {
                   ", a quarter turn in " + quantity_text(90 * deg / run.turning_rate, Quantity::time) + ".");
 }
 
-void check_averaging(RuleBook& book, const std::string& path, double averaging) {
-  for (const double known : {3.0, 60.0, 600.0, 3600.0})
-    if (std::abs(averaging - known) < 1e-6 * known) return;
-  if (std::isnan(averaging) || book.reported(path, "averaging")) return;
-  book.stop(path, "averaging", "Winds are known here as the mean of 3 s (gust), 1 min, 10 min or 1 h.")
-      .advice = "Write one of: averaging=\"3 s\" | \"1 min\" | \"10 min\" | \"1 h\"";
+// The gust pressure at the axis that the design's own chain makes of a speed with an averaging; NaN where the
+// site is not fit for it yet.
+double gust_pressure(const TroughDesign& d, const WindStateInput& wind, double averaging) {
+  loads::StatedWind stated;
+  stated.speed = wind.speed;
+  stated.averaging = averaging;
+  if (!std::isnan(wind.height)) stated.height = wind.height;
+  stated.over = wind.over == "site" ? loads::StatedOver::site : loads::StatedOver::open_country;
+  try {
+    return loads::wind_at(d.row.axis_height, stated, site_of(d.site)).gust_pressure;
+  } catch (const std::invalid_argument&) {
+    return not_given;
+  }
 }
 
 void check_state(RuleBook& book, const char* path, const WindStateInput& wind) {
@@ -104,17 +114,16 @@ void check_state(RuleBook& book, const char* path, const WindStateInput& wind) {
                  "This wind needs its \"speed\" (with averaging and height), or the velocity \"pressure\" at "
                  "the axis (with averaging).");
   if (std::isnan(wind.averaging)) {
-    const double ratio =
-        1.6;  // 3 s gust over 10 min mean near the ground in open country, only to show the size
-    const double q = 0.5 * 1.225 * wind.speed * wind.speed;
-    Violation& v = book.missing(
-        path, "averaging",
-        by_speed ? "The same " + speed(wind.speed) + " gives gusts of " +
-                       quantity_text(std::round(q), Quantity::pressure) + " if it is a 3 s gust, about " +
-                       quantity_text(std::round(q * ratio * ratio / 10) * 10, Quantity::pressure) +
-                       " if it is a 10-minute mean. Write what your record or your client means."
-                 : std::string("A velocity pressure of a gust and of a mean differ by more than twice. Write "
-                               "which one this is."));
+    const double gust = gust_pressure(book.d, wind, 3), mean = gust_pressure(book.d, wind, 600);
+    const auto pascals = [](double q) { return quantity_text(std::round(q), Quantity::pressure); };
+    std::string text =
+        "A velocity pressure of a gust and of a mean differ by more than twice. Write which one this is.";
+    if (by_speed) text = "A gust and a mean of the same speed differ by more than twice in load.";
+    if (by_speed && !std::isnan(gust))
+      text = "The same " + speed(wind.speed) + " gives gusts of " + pascals(gust) +
+             " at the axis if it is a 3 s gust, of " + pascals(mean) + " if it is a 10-minute mean.";
+    if (by_speed) text += " Write what your record or your client means.";
+    Violation& v = book.missing(path, "averaging", text);
     v.advice = "Add one of: averaging=\"3 s\" | \"1 min\" | \"10 min\" | \"1 h\"";
     v.involves = {std::string(path) + "/speed", std::string(path) + "/pressure"};
   }
@@ -190,6 +199,14 @@ void check_site(RuleBook& book) {
 
 }  // namespace
 
+void check_averaging(RuleBook& book, const std::string& path, double averaging, const char* attribute) {
+  for (const double known : {3.0, 60.0, 600.0, 3600.0})
+    if (std::abs(averaging - known) < 1e-6 * known) return;
+  if (std::isnan(averaging) || book.reported(path, attribute)) return;
+  book.stop(path, attribute, "Winds are known here as the mean of 3 s (gust), 1 min, 10 min or 1 h.").advice =
+      std::string("Write one of: ") + attribute + "=\"3 s\" | \"1 min\" | \"10 min\" | \"1 h\"";
+}
+
 void check_ground(RuleBook& book) {
   check_mechanism(book);
   check_drive(book);
@@ -217,6 +234,10 @@ void check_weather(RuleBook& book) {
   check_averaging(book, "operation/anemometer", book.d.operation.anemometer.averaging);
   check_averaging(book, "wind/year", book.d.wind.year.averaging);
   check_run(book);
+  check_state(book, "wind/unfinished", book.d.wind.unfinished);
+  if (const loads::Opinion o =
+          loads::guard_heights({.axis = book.d.row.axis_height, .altitude = book.d.site.altitude}))
+    if (o->severity == loads::Severity::warned) book.warn("row", "axis-height", o->text).advice = o->fix;
 }
 
 }  // namespace focalframe::models

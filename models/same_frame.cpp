@@ -10,13 +10,15 @@
 namespace focalframe::models {
 namespace {
 
-// First words of the element paths that shape the frame.
-constexpr std::array<const char*, 10> shaping = {"parabola",       "row",        "torque-tube", "ribs",
-                                                 "purlins",        "end-plates", "mirror",      "receiver",
-                                                 "counterweights", "pylons"};
+// First words of the element paths that shape the frame or its unit load cases.
+constexpr std::array<const char*, 18> shaping = {
+    "parabola", "row",        "torque-tube",    "ribs",     "purlins",     "end-plates",
+    "mirror",   "receiver",   "counterweights", "pylons",   "snow",        "water",
+    "ice",      "earthquake", "temperature",    "erection", "maintenance", "bare-members"};
 
 bool shapes_frame(const std::string& element, const std::string& attribute) {
-  if (element == "drive") return attribute == "stiffness" || attribute == "mass";
+  if (element == "drive") return attribute == "stiffness" || attribute == "mass" || attribute == "friction";
+  if (element == "wind") return attribute == "along-row";
   const std::string first = element.substr(0, element.find('/'));
   return std::find(shaping.begin(), shaping.end(), first) != shaping.end();
 }

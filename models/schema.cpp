@@ -382,9 +382,29 @@ void add_site(Table& table) {
   wind.text("zone", &WindInput::zone, "place of the row in its field")
       .required()
       .words({"isolated", "edge", "second-row", "interior"});
-  wind.add("dynamic-factor", Q::ratio, &WindInput::dynamic_factor, "cd on drive and foundation")
+  wind.number_or_word("dynamic-factor", Q::ratio, &WindInput::dynamic_factor, "EN Annex B",
+                      &WindInput::dynamic_word,
+                      "cd on drive and foundation, or EN Annex B: from the row's first torsional frequency")
       .between(1, 4)
       .preset("1");
+  wind.add("damping", Q::ratio, &WindInput::damping,
+           "dynamic-factor EN Annex B only: logarithmic decrement of the structure")
+      .between(0.005, 1)
+      .preset("0.05");
+  wind.text("map", &WindInput::map,
+            "level of the stated speeds; an ultimate map holds the wind factor already")
+      .words({"service", "ultimate"});
+  wind.add("altitude-in-speed", Q::none, &WindInput::altitude_in_speed,
+           "yes: the map or an altitude factor has reduced the speeds for thin air already")
+      .words({"no", "yes"})
+      .preset("no");
+  wind.add("faces-open-ground", Q::none, &WindInput::faces_open_ground, "yes: no row stands upwind")
+      .words({"no", "yes"})
+      .preset("no");
+  wind.add("along-row", Q::none, &WindInput::along_row,
+           "yes: STOW also in oblique wind and in wind along the row")
+      .words({"yes", "no"})
+      .preset("yes");
   wind.add("size-factor", Q::none, &WindInput::size_factor,
            "EN 1991-1-4 size factor for drive and foundation")
       .words({"yes", "no"})
@@ -405,12 +425,20 @@ void add_site(Table& table) {
     made.add("pressure", Q::pressure, &WindStateInput::pressure,
              "velocity pressure at the axis, instead of speed")
         .above(0, 10e3);
+    made.text("over", &WindStateInput::over,
+              "ground the speed holds over: open country (maps, weather stations) or the site itself")
+        .words({"open country", "site"})
+        .preset("open country");
+    made.add("return-period", Q::ratio, &WindStateInput::return_period,
+             "years wanted, when the speed stated is that of 50 years (EN 1991-1-4, 4.2)")
+        .between(2, 10000);
   };
   state("wind/operate", true, &WindInput::operate, "while it works: the light is judged in this wind");
   state("wind/turning", false, &WindInput::turning,
         "on the way to stow; 1.2 times the operate wind when left out");
   state("wind/stow", false, &WindInput::stow, "parked");
   state("wind/stuck", false, &WindInput::stuck, "caught in any pose without power");
+  state("wind/unfinished", false, &WindInput::unfinished, "while it is being built; needs <erection>");
 
   ElementMaker<YearInput> year(
       table, "wind/year", false, [](TroughDesign& d) -> YearInput& { return d.wind.year; },
@@ -426,6 +454,131 @@ void add_site(Table& table) {
   year.text("record", &YearInput::record,
             "path of an hourly record, beside the design: speed, direction, beam");
   year.text("hours", &YearInput::hours, "hours the record counts").required().words({"daylight", "all"});
+}
+
+void add_actions(Table& table) {
+  ElementMaker<BareMembersInput> bare(
+      table, "bare-members", false, [](TroughDesign& d) -> BareMembersInput& { return d.bare_members; },
+      "drag coefficients of what the coefficient table leaves out");
+  bare.add("tube", Q::ratio, &BareMembersInput::tube, "torque tube, on its width")
+      .between(0, 3)
+      .preset("1.2 round, 2.2 square");
+  bare.add("ribs", Q::ratio, &BareMembersInput::ribs,
+           "ribs, on their thickness across the row and their depth along it")
+      .between(0, 3)
+      .preset("2");
+  bare.add("receiver", Q::ratio, &BareMembersInput::receiver, "receiver, on its outer diameter")
+      .between(0, 3)
+      .preset("1.2");
+  bare.add("posts", Q::ratio, &BareMembersInput::posts,
+           "receiver posts, on their width, in wind along the row")
+      .between(0, 3)
+      .preset("1.2 round, 2.2 square");
+  bare.add("pylons", Q::ratio, &BareMembersInput::pylons, "pylons, on their width")
+      .between(0, 3)
+      .preset("1.2 round, 2.2 square");
+  bare.text("shielding", &BareMembersInput::shielding,
+            "how far the mirror hides tube and ribs: mirror = as much as it stands across the wind")
+      .words({"mirror", "none", "all"})
+      .preset("mirror");
+  bare.text("back", &BareMembersInput::back, "back of the mirror, for friction of wind along the row")
+      .words({"smooth", "rough", "ribbed"})
+      .preset("ribbed");
+
+  ElementMaker<SnowInput> snow(
+      table, "snow", false, [](TroughDesign& d) -> SnowInput& { return d.snow; },
+      "on the mirror, by attitude");
+  snow.add("on-ground", Q::pressure, &SnowInput::on_ground, "characteristic load on level ground")
+      .required()
+      .above(0, 20e3);
+  snow.text("back", &SnowInput::back, "what the mirror's back does with snow when it is turned down")
+      .words({"sheds", "holds"})
+      .preset("sheds");
+
+  ElementMaker<WaterInput> water(
+      table, "water", false, [](TroughDesign& d) -> WaterInput& { return d.water; },
+      "rain standing in the mirror");
+  water.text("drains", &WaterInput::drains, "blocked: a mirror that faces up holds water up to its lower rim")
+      .required()
+      .words({"open", "blocked"});
+
+  ElementMaker<IceInput> ice(
+      table, "ice", false, [](TroughDesign& d) -> IceInput& { return d.ice; }, "glaze on mirror and members");
+  ice.add("thickness", Q::length, &IceInput::thickness, "on every surface").required().above(0, 0.2);
+  ice.add("wind-share", Q::ratio, &IceInput::wind_share, "share of the velocity pressure that comes with it")
+      .between(0, 1)
+      .preset("0.4");
+
+  ElementMaker<TemperatureInput> temperature(
+      table, "temperature", false, [](TroughDesign& d) -> TemperatureInput& { return d.temperature; },
+      "of frame and receiver");
+  temperature
+      .add("set-at", Q::temperature, &TemperatureInput::set_at, "frame when mirrors and joints were set")
+      .required()
+      .between(233.15, 333.15);
+  temperature.add("least", Q::temperature, &TemperatureInput::least, "coldest frame")
+      .required()
+      .between(203.15, 333.15);
+  temperature.add("most", Q::temperature, &TemperatureInput::most, "hottest frame")
+      .required()
+      .between(253.15, 373.15);
+  temperature
+      .add("across-frame", Q::temperature, &TemperatureInput::across_frame,
+           "tube and ribs warmer on the mirror's side, a difference in K")
+      .between(0, 100)
+      .preset("0 K");
+  temperature
+      .add("across-receiver", Q::temperature, &TemperatureInput::across_receiver,
+           "receiver warmer on its lit side, a difference in K")
+      .between(0, 200)
+      .preset("0 K");
+  temperature
+      .add("receiver", Q::temperature, &TemperatureInput::receiver_at,
+           "hottest mean of the receiver, for its expansion")
+      .between(253.15, 873.15);
+
+  ElementMaker<EarthquakeInput> quake(
+      table, "earthquake", false, [](TroughDesign& d) -> EarthquakeInput& { return d.earthquake; },
+      "as a level force on every mass");
+  quake.text("code", &EarthquakeInput::code, "what the acceleration is computed by")
+      .words({"EN 1998", "ASCE 7"})
+      .preset("EN 1998");
+  quake
+      .add("ground-acceleration", Q::acceleration, &EarthquakeInput::ground_acceleration,
+           "EN 1998: a_g with the importance factor")
+      .above(0, 15);
+  quake.text("ground", &EarthquakeInput::ground, "EN 1998: type of ground")
+      .words({"A", "B", "C", "D", "E"})
+      .preset("B");
+  quake.add("behaviour", Q::ratio, &EarthquakeInput::behaviour, "EN 1998: q").between(1, 8).preset("1.5");
+  quake.add("s-ds", Q::ratio, &EarthquakeInput::s_ds, "ASCE 7: design acceleration at 0.2 s over g")
+      .above(0, 5);
+  quake.add("s-d1", Q::ratio, &EarthquakeInput::s_d1, "ASCE 7: design acceleration at 1 s over g")
+      .above(0, 3);
+  quake.add("response", Q::ratio, &EarthquakeInput::response, "ASCE 7: R").between(1, 8).preset("1.25");
+  quake.add("importance", Q::ratio, &EarthquakeInput::importance, "ASCE 7: I_e").between(0.5, 2).preset("1");
+  quake.add("period", Q::time, &EarthquakeInput::period, "of the first mode; the worst of all when left out")
+      .above(0, 10);
+
+  ElementMaker<MaintenanceInput> person(
+      table, "maintenance", false, [](TroughDesign& d) -> MaintenanceInput& { return d.maintenance; },
+      "a load where people and vehicles touch: a rib's tip, the tube, the receiver");
+  person.add("load", Q::force, &MaintenanceInput::load, "person with tools, ladder, washer; acts downwards")
+      .required()
+      .above(0, 50e3);
+  person.add("at", Q::angle, &MaintenanceInput::at, "elevation of the service pose")
+      .required()
+      .between(-180 * deg, 280 * deg);
+
+  ElementMaker<ErectionInput> erection(
+      table, "erection", false, [](TroughDesign& d) -> ErectionInput& { return d.erection; },
+      "the row as it is left overnight while it is being built; needs <wind><unfinished/>");
+  erection.add("at", Q::angle, &ErectionInput::at, "elevation it is left in")
+      .required()
+      .between(-180 * deg, 280 * deg);
+  erection.text("mirrors", &ErectionInput::mirrors, "mirrors that are on")
+      .words({"none", "one side", "all"})
+      .preset("none");
 }
 
 void add_run(Table& table) {
@@ -529,6 +682,11 @@ void add_run(Table& table) {
   optics.add("incidence", Q::angle, &OpticsInput::incidence, "angle along the row the light is judged at")
       .between(0, 75 * deg)
       .preset("0 deg");
+  optics
+      .add("wind-averaging", Q::time, &OpticsInput::wind_averaging,
+           "mean wind the light is judged in: 10 min, 1 min or 3 s (gust)")
+      .between(3, 3600)
+      .preset("10 min");
 }
 
 void add_limits(Table& table) {
@@ -551,7 +709,8 @@ void add_limits(Table& table) {
       .add("re-aim", Q::time, &LimitsInput::re_aim,
            "turned by hand: least time the light stays above its limit while the sun moves on")
       .above(0, 86400);
-  limits.text("strength", &LimitsInput::strength, "load factors of a standard").words({"EN 1990", "ASCE 7"});
+  limits.text("strength", &LimitsInput::strength,
+              "combinations of actions: EN 1990, ASCE 7, a shipped set's name or a path of your own");
   limits
       .add("strength-factor", Q::ratio, &LimitsInput::strength_factor,
            "instead: plain factor on yield, loads unfactored")
@@ -596,6 +755,7 @@ const std::vector<Element>& trough_schema() {
     add_carried(made);
     add_ground(made);
     add_site(made);
+    add_actions(made);
     add_run(made);
     add_limits(made);
     return made;

@@ -243,6 +243,7 @@ std::vector<Violation> validate(const TroughDesign& design) {
   check_shape(book);
   check_ground(book);
   check_weather(book);
+  check_actions(book);
   check_optics(book);
   check_parts(book);
   return std::move(book.violations);

@@ -47,6 +47,11 @@ void check_parts(RuleBook& book);     ///< what each kind of rib and torque tube
 void check_ground(RuleBook& book);    ///< pylons, drive, poses
 void check_weather(RuleBook& book);   ///< site, winds, anemometer, year
 void check_run(RuleBook& book);       ///< year, turning by hand, trigger
+void check_actions(RuleBook& book);   ///< temperature, snow, earthquake, erection, maintenance
 void check_optics(RuleBook& book);    ///< optics, limits, accepted exceptions
+
+/// Only the averaging times winds are known by.
+void check_averaging(RuleBook& book, const std::string& path, double averaging,
+                     const char* attribute = "averaging");
 
 }  // namespace focalframe::models

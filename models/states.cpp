@@ -7,6 +7,8 @@
 
 #include "fem/units.h"
 #include "loads/pose.h"
+#include "loads/statistics.h"
+#include "models/quantity.h"
 
 namespace focalframe::models {
 namespace {
@@ -35,7 +37,19 @@ loads::WindAtHeight wind_of(const TroughDesign& design, const WindStateInput& wi
   stated.averaging = wind.averaging;
   if (!std::isnan(wind.height)) stated.height = wind.height;
   stated.pressure = wind.pressure * factor * factor;
-  return loads::wind_at(design.row.axis_height, stated, site_of(design.site));
+  stated.over = wind.over == "site" ? loads::StatedOver::site : loads::StatedOver::open_country;
+  const double years = wind.return_period;
+  const double rarer = std::isnan(years) ? 1 : loads::return_period_factor({.years = years});
+  stated.speed *= rarer;
+  stated.pressure *= rarer * rarer;
+  loads::WindAtHeight at_axis = loads::wind_at(design.row.axis_height, stated, site_of(design.site));
+  if (!std::isnan(years))
+    at_axis.chain.insert(
+        at_axis.chain.begin(),
+        {"return-period factor c_prob", rarer, "-",
+         "((1 - 0.2 ln(-ln(1 - 1/T))) / (1 - 0.2 ln(-ln 0.98)))^0.5, T = " + number_text(years) +
+             " years, on the speed stated for 50 (EN 1991-1-4, 4.2)"});
+  return at_axis;
 }
 
 }  // namespace
@@ -50,6 +64,10 @@ std::string state_text(StateKind kind) {
       return "STOW";
     case StateKind::stuck:
       return "STUCK";
+    case StateKind::unfinished:
+      return "UNFINISHED";
+    case StateKind::maintenance:
+      return "MAINTENANCE";
   }
   return {};
 }
@@ -61,9 +79,17 @@ std::string place_text(const State& state) {
                          ? (loads::upwind_side(state.wind_from) > 0 ? "from +Y" : "from -Y")
                      : pitch < pi / 2 ? "face"
                                       : "back";
-  char text[48];
-  std::snprintf(text, sizeof text, "%s %.0f deg, %s", state_text(state.kind).c_str(),
-                std::round(state.elevation / deg) + 0.0, face);
+  const double off = loads::yaw(state.wind_from);
+  char text[80];
+  if (off > along_row_angle - 1e-6)
+    std::snprintf(text, sizeof text, "%s %.0f deg, along the row", state_text(state.kind).c_str(),
+                  std::round(state.elevation / deg) + 0.0);
+  else if (off > 1e-6)
+    std::snprintf(text, sizeof text, "%s %.0f deg, %s, %.0f deg oblique", state_text(state.kind).c_str(),
+                  std::round(state.elevation / deg) + 0.0, face, off / deg);
+  else
+    std::snprintf(text, sizeof text, "%s %.0f deg, %s", state_text(state.kind).c_str(),
+                  std::round(state.elevation / deg) + 0.0, face);
   return text;
 }
 
@@ -84,6 +110,11 @@ std::vector<State> asked_states(const TroughDesign& design) {
       add(states, StateKind::stow,
           within > 0 ? std::vector<double>{op.stow_at - within, op.stow_at, op.stow_at + within}
                      : std::vector<double>{op.stow_at});
+      // Oblique from both sides, and once along the row: the row is alike from both ends, and everything but
+      // the reactions' signs is too.
+      if (design.wind.along_row)
+        for (double from : {oblique_angle, pi - oblique_angle, along_row_angle})
+          states.push_back({StateKind::stow, op.stow_at, from});
     }
     lowest = std::min(lowest, op.stow_at);
     highest = std::max(highest, op.stow_at);
@@ -92,6 +123,11 @@ std::vector<State> asked_states(const TroughDesign& design) {
     add(states, StateKind::stuck,
         sweep(std::isnan(drive.turns_from) ? lowest : drive.turns_from,
               std::isnan(drive.turns_to) ? highest : drive.turns_to));
+  if (design.wind.unfinished.given && !std::isnan(design.erection.at)) {
+    add(states, StateKind::unfinished, {design.erection.at});
+    if (design.wind.along_row) states.push_back({StateKind::unfinished, design.erection.at, along_row_angle});
+  }
+  if (!std::isnan(design.maintenance.at)) add(states, StateKind::maintenance, {design.maintenance.at});
   return states;
 }
 
@@ -126,6 +162,10 @@ const loads::WindAtHeight& StateWinds::of(StateKind kind) const {
       return stow;
     case StateKind::stuck:
       return stuck;
+    case StateKind::unfinished:
+      return unfinished;
+    case StateKind::maintenance:
+      return operate;
   }
   return operate;
 }
@@ -140,6 +180,7 @@ StateWinds winds_at_axis(const TroughDesign& design) {
                                {"turning wind over operate wind", turning_over_operate, "-", "judgement"});
   winds.stow = wind_of(design, design.wind.stow);
   winds.stuck = wind_of(design, design.wind.stuck);
+  winds.unfinished = wind_of(design, design.wind.unfinished);
   return winds;
 }
 
@@ -153,7 +194,8 @@ std::vector<Violation> table_gaps(const TroughDesign& design, const loads::Coeff
     for (double offset : {-spread, 0.0, spread})
       covered = covered && loads::coefficients_at(table, loads::wrap_angle(pitch + offset)).has_value();
     if (covered) continue;
-    const char* attribute[] = {"track-from", "stow-at", "stow-at", "turns-from"};
+    const char* element[] = {"operation", "operation", "operation", "drive", "erection", "maintenance"};
+    const char* attribute[] = {"track-from", "stow-at", "stow-at", "turns-from", "at", "at"};
     const auto kind = static_cast<std::size_t>(state.kind);
     char text[400];
     std::snprintf(
@@ -163,7 +205,7 @@ std::vector<Violation> table_gaps(const TroughDesign& design, const loads::Coeff
         table.name.c_str(), table.pitch_min / deg, table.pitch_max / deg, place_text(state).c_str(),
         (pitch - spread) / deg, (pitch + spread) / deg);
     Violation v;
-    v.element = state.kind == StateKind::stuck ? "drive" : "operation";
+    v.element = element[kind];
     v.attribute = attribute[kind];
     v.text = text;
     v.advice = "Add rows to the table, choose another pose, or name a table that covers it.";

@@ -12,7 +12,10 @@
 
 namespace focalframe::models {
 
-enum class StateKind { operate, turning, stow, stuck };
+enum class StateKind { operate, turning, stow, stuck, unfinished, maintenance };
+inline constexpr StateKind all_state_kinds[] = {StateKind::operate,    StateKind::turning,
+                                                StateKind::stow,       StateKind::stuck,
+                                                StateKind::unfinished, StateKind::maintenance};
 std::string state_text(StateKind kind);
 
 /// One pose with the wind on one face.
@@ -28,12 +31,14 @@ std::string place_text(const State& state);
 
 /// Every asked state in both winds. Operate: the ends of the tracking range and every multiple of 15 deg
 /// between. Turning: from the stow pose to the farther end of the tracking range, likewise. Stow: the pose
-/// and both ends of its tolerance. Stuck: the drive's whole range (or what the states above span).
+/// and both ends of its tolerance, also in oblique wind and in wind along the row. Stuck: the drive's whole
+/// range (or what the states above span). Unfinished and maintenance: their own pose.
 std::vector<State> asked_states(const TroughDesign& design);
 
-/// The wind of each kind of state at the rotation axis; chain empty when the design states none.
+/// The wind of each kind of state at the rotation axis; chain empty when the design states none. Maintenance
+/// works in the OPERATE wind.
 struct StateWinds {
-  loads::WindAtHeight operate, turning, stow, stuck;
+  loads::WindAtHeight operate, turning, stow, stuck, unfinished;
   const loads::WindAtHeight& of(StateKind kind) const;
 };
 
@@ -46,6 +51,10 @@ loads::Site site_of(const SiteInput& site);
 
 /// Part of the gust angle that turbulence brings, added to the pose tolerance for strength [rad] (judgement).
 inline constexpr double turbulence_angle = 5.0 * 3.14159265358979323846 / 180.0;
+
+/// Angles off the row's normal of the oblique and the along-row wind [rad].
+inline constexpr double oblique_angle = 45.0 * 3.14159265358979323846 / 180.0,
+                        along_row_angle = 90.0 * 3.14159265358979323846 / 180.0;
 
 /// Poses of asked states that the table does not cover, as violations with rule "table-range".
 std::vector<Violation> table_gaps(const TroughDesign& design, const loads::CoefficientTable& table);

@@ -3,15 +3,35 @@
 #include <algorithm>
 #include <cmath>
 #include <cstdio>
+#include <stdexcept>
 
 #include "fem/section.h"
-#include "loads/combination.h"
+#include "models/factored_cases.h"
 
 namespace focalframe::models {
 namespace {
 
 using Eigen::MatrixXd;
 using Eigen::VectorXd;
+
+int column_count(const StateLoads& loads) {
+  return 1 + static_cast<int>(loads.wind.cols()) + static_cast<int>(loads.others.size());
+}
+
+// Weight, winds, others: the order FactoredTerm counts in.
+MatrixXd columns_of(const StateLoads& loads) {
+  MatrixXd all(loads.weight.size(), column_count(loads));
+  all.col(0) = loads.weight;
+  const int winds = static_cast<int>(loads.wind.cols());
+  all.middleCols(1, winds) = loads.wind;
+  for (std::size_t i = 0; i < loads.others.size(); ++i)
+    all.col(1 + winds + static_cast<int>(i)) = loads.others[i].amplitudes;
+  return all;
+}
+
+Spread spread_of(const FactoredCase& factored, const StateLoads& loads) {
+  return factored.variant < 0 ? Spread::linear : loads.spread[static_cast<std::size_t>(factored.variant)];
+}
 
 bool moves(StateKind kind) { return kind == StateKind::operate || kind == StateKind::turning; }
 
@@ -52,33 +72,36 @@ std::string pairs_text(const loads::CombinationSet& set, bool stuck) {
   return text;
 }
 
+StrengthRule plain_rule(const char* name, double on_yield, const char* text) {
+  return {name, {{1, 1}}, {{1, 1}}, on_yield, text, plain_set()};
+}
+
 }  // namespace
 
-StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site) {
-  if (limits.strength == "EN 1990") {
-    const loads::CombinationSet set = loads::en_1990(std::isnan(site.altitude) ? 0 : site.altitude);
-    return {set.name, pairs(set, false), pairs(set, true), 1.0,
-            "EN 1990 " + set.edition + ": " + pairs_text(set, false) + "; STUCK as accidental " +
-                pairs_text(set, true) + "; yield over 1.0 (factors from memory; check your national annex)"};
-  }
-  if (limits.strength == "ASCE 7") {
-    const loads::CombinationSet set = loads::asce_7_strength(site.asce_edition);
-    return {set.name, pairs(set, false), pairs(set, true), 0.9,
-            "ASCE " + set.edition + " strength: " + pairs_text(set, false) + "; STUCK " +
+StrengthRule strength_rule(const TroughDesign& design) {
+  const loads::CombinationSet& set = design.combinations;
+  if (!design.limits.strength.empty()) {
+    if (set.combinations.empty())
+      throw std::invalid_argument("limits.strength names a set of combinations, but the design holds none");
+    char yield[48];
+    std::snprintf(yield, sizeof yield, "%.3g times yield", set.on_yield);
+    return {set.title,
+            pairs(set, false),
+            pairs(set, true),
+            set.on_yield,
+            set.title + " (" + set.edition + "): " + pairs_text(set, false) + "; STUCK " +
                 pairs_text(set, true) + "; wind from " +
-                (set.ultimate_wind_map ? "an ultimate-level map" : "a service-level map") +
-                "; 0.9 times yield (from memory; check your edition)"};
+                (set.ultimate_wind_map ? "an ultimate-level map" : "a service-level map") + "; " + yield +
+                ". " + set.source,
+            set};
   }
-  if (!std::isnan(limits.strength_factor)) {
+  const double factor = design.limits.strength_factor;
+  if (!std::isnan(factor)) {
     char text[96];
-    std::snprintf(text, sizeof text, "unfactored actions, yield over %.2f", limits.strength_factor);
-    return {"plain factor", {{1, 1}}, {{1, 1}}, 1 / limits.strength_factor, text};
+    std::snprintf(text, sizeof text, "unfactored actions, yield over %.2f", factor);
+    return plain_rule("plain factor", 1 / factor, text);
   }
-  return {"none",
-          {{1, 1}},
-          {{1, 1}},
-          1.0,
-          "no strength rule asked for: unfactored actions against yield, not judged"};
+  return plain_rule("none", 1.0, "no strength rule asked for: unfactored actions against yield, not judged");
 }
 
 StrengthCheck::StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row), rule_(std::move(rule)) {
@@ -92,10 +115,6 @@ StrengthCheck::StrengthCheck(const RowModel& row, StrengthRule rule) : row_(row)
     stand_columns_.push_back(buckling_resistances(stand.frame, stand.buckling, rule_.on_yield));
 }
 
-const std::vector<ActionFactors>& StrengthCheck::factors(StateKind kind) const {
-  return kind == StateKind::stuck ? rule_.accidental : rule_.usual;
-}
-
 void StrengthCheck::add(const PoseModel& pose, const std::vector<StateLoads>& states) {
   if (states.empty()) return;
   add_members(pose, states);
@@ -106,8 +125,8 @@ void StrengthCheck::add(const PoseModel& pose, const std::vector<StateLoads>& st
 }
 
 void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
-                          const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads, int variant,
-                          StressUse& worst) const {
+                          const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads,
+                          const FactoredCase& factored, StressUse& worst) const {
   const fem::Section& section = frame.sections[static_cast<std::size_t>(member.section)];
   const fem::Material& material = frame.materials[static_cast<std::size_t>(member.material)];
   const double stress = std::max(fem::von_mises_bound(section, at_end(ends, false)),
@@ -115,99 +134,126 @@ void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
   const double allowed = material.yield * rule_.on_yield;
   const double used = allowed > 0 ? stress / allowed : 0;
   if (!worst.part.empty() && (allowed > 0 ? used <= worst.used : stress <= worst.stress)) return;
-  worst = {stress, allowed, used, member.name, loads.state, loads.spread[static_cast<std::size_t>(variant)]};
+  worst = {stress,
+           allowed,
+           used,
+           member.name,
+           loads.state,
+           spread_of(factored, loads),
+           case_text(factored, loads)};
 }
 
 void StrengthCheck::judge_buckling(const MemberResistance& resistance, const fem::Member& member,
                                    const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads,
-                                   int variant, BucklingUse& worst) const {
+                                   const FactoredCase& factored, BucklingUse& worst) const {
   const BucklingShare share = buckling_share(resistance, ends);
   if (!worst.part.empty() && share.used <= worst.used) return;
   worst = {share.used,  share.compression, resistance.N,
-           member.name, loads.state,       loads.spread[static_cast<std::size_t>(variant)]};
+           member.name, loads.state,       spread_of(factored, loads)};
 }
 
 void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLoads>& states) {
-  // One product for everything this pose is asked: weight, then every wind of every state.
-  int columns = 1;
-  for (const StateLoads& loads : states) columns += static_cast<int>(loads.wind.cols());
+  // One product for everything this pose is asked: weight, every wind and every other action of every state.
+  int columns = 0;
+  for (const StateLoads& loads : states) columns += column_count(loads);
   MatrixXd amplitudes(states[0].weight.size(), columns);
-  amplitudes.col(0) = states[0].weight;
-  int at = 1;
+  int at = 0;
   for (const StateLoads& loads : states) {
-    amplitudes.middleCols(at, loads.wind.cols()) = loads.wind;
-    at += static_cast<int>(loads.wind.cols());
+    amplitudes.middleCols(at, column_count(loads)) = columns_of(loads);
+    at += column_count(loads);
   }
   const MatrixXd forces = row_.end_forces(pose, amplitudes);
   const fem::Frame& frame = row_.collector().body;
-  VectorXd ends(12);
-  at = 1;
-  for (const StateLoads& loads : states)
-    for (int v = 0; v < loads.wind.cols(); ++v, ++at)
-      for (const ActionFactors& f : factors(loads.state.kind)) {
-        const auto take = [&](std::size_t m) {
-          const int first = 12 * static_cast<int>(m);
-          ends = f.permanent * forces.block<12, 1>(first, 0) + f.wind * forces.block<12, 1>(first, at);
-        };
-        for (std::size_t m = 0; m < frame.members.size(); ++m) {
-          take(m);
-          judge(frame.members[m], frame, ends, loads, v, *of_member_[m]);
-        }
-        for (std::size_t c = 0; c < columns_.size(); ++c) {
-          const std::size_t m = static_cast<std::size_t>(columns_[c].member);
-          take(m);
-          judge_buckling(columns_[c], frame.members[m], ends, loads, v, *of_column_[c]);
-        }
+  Eigen::Matrix<double, 12, 1> ends;
+  at = 0;
+  for (const StateLoads& loads : states) {
+    for (const FactoredCase& factored : factored_cases(rule_.set, loads, Wanted::strength)) {
+      const auto take = [&](std::size_t m) {
+        const int first = 12 * static_cast<int>(m);
+        const FactoredTerm& weight = factored.terms.front();
+        ends = weight.factor * forces.block<12, 1>(first, at + weight.column);
+        for (std::size_t t = 1; t < factored.terms.size(); ++t)
+          ends += factored.terms[t].factor * forces.block<12, 1>(first, at + factored.terms[t].column);
+      };
+      for (std::size_t m = 0; m < frame.members.size(); ++m) {
+        take(m);
+        judge(frame.members[m], frame, ends, loads, factored, *of_member_[m]);
       }
+      for (std::size_t c = 0; c < columns_.size(); ++c) {
+        const std::size_t m = static_cast<std::size_t>(columns_[c].member);
+        take(m);
+        judge_buckling(columns_[c], frame.members[m], ends, loads, factored, *of_column_[c]);
+      }
+    }
+    at += column_count(loads);
+  }
 }
 
 void StrengthCheck::add_drive(const PoseModel& pose, const StateLoads& loads) {
-  const Eigen::RowVectorXd row = pose.bearing_force.row(row_.drive_turn());
-  const double weight = row.dot(loads.weight);
-  for (int v = 0; v < loads.wind.cols(); ++v) {
-    const double bare = weight + loads.gathered * row.dot(loads.wind.col(v));
+  const Eigen::RowVectorXd torques = pose.bearing_force.row(row_.drive_turn()) * columns_of(loads);
+  const bool moving = moves(loads.state.kind);
+  for (const FactoredCase& factored : factored_cases(rule_.set, loads, Wanted::service)) {
+    double bare = 0;
+    for (const FactoredTerm& t : factored.terms)
+      bare += t.factor * (t.wind ? loads.gathered : 1) * torques[t.column];
     // Friction works against the drive while it moves, and may do so either way.
-    const double torque = moves(loads.state.kind) ? bare + std::copysign(loads.friction, bare) : bare;
-    const TorqueUse use{torque, loads.state, loads.spread[static_cast<std::size_t>(v)]};
-    if (std::abs(torque) > std::abs(result_.holding.torque)) result_.holding = use;
-    if (!moves(loads.state.kind)) continue;
-    if (std::abs(torque) > std::abs(result_.moving.torque)) result_.moving = use;
+    const double torque = moving ? bare + std::copysign(loads.friction, bare) : bare;
+    const auto use = [&] {
+      return TorqueUse{torque, loads.state, spread_of(factored, loads), case_text(factored, loads)};
+    };
+    if (std::abs(torque) > std::abs(result_.holding.torque)) result_.holding = use();
+    if (!moving || factored.earthquake) continue;
+    if (std::abs(torque) > std::abs(result_.moving.torque)) result_.moving = use();
     double& at_pose = result_.moving_torque[loads.state.elevation];
     at_pose = std::max(at_pose, std::abs(torque));
   }
 }
 
 void StrengthCheck::add_stands(const PoseModel& pose, const StateLoads& loads) {
+  const MatrixXd amplitudes = columns_of(loads);
+  const std::vector<FactoredCase> factored = factored_cases(rule_.set, loads, Wanted::strength),
+                                  plain = factored_cases(rule_.set, loads, Wanted::service);
   for (std::size_t k = 0; k < row_.collector().stands.size(); ++k) {
     const Stand& stand = row_.collector().stands[k];
-    const int number = static_cast<int>(k);
-    const VectorXd weight = row_.evaluate_stand(number, pose, loads.weight);
-    const MatrixXd wind = row_.evaluate_stand(number, pose, loads.wind);
-    for (int v = 0; v < wind.cols(); ++v) {
-      // The drive pylon gathers the whole row's torque; the others stand alone in a gust.
-      const double gathered = stand.driven ? loads.gathered : 1;
-      for (const ActionFactors& f : factors(loads.state.kind)) {
-        const VectorXd ends = f.permanent * weight + f.wind * gathered * wind.col(v);
-        judge(stand.frame.members[0], stand.frame, ends, loads, v,
-              result_.groups[stand.frame.members[0].group]);
-        for (const MemberResistance& r : stand_columns_[k])
-          judge_buckling(r, stand.frame.members[0], ends, loads, v,
-                         result_.buckling[stand.frame.members[0].group]);
-      }
-      const VectorXd plain = weight + gathered * wind.col(v);
-      // Post axes x, y, z are world Z, X, Y once the section's roll is taken back.
-      const double c = std::cos(stand.roll), s = std::sin(stand.roll);
-      FootReaction foot{{c * plain[1] - s * plain[2], s * plain[1] + c * plain[2], plain[0],
-                         c * plain[4] - s * plain[5], s * plain[4] + c * plain[5], plain[3]},
-                        number,
-                        loads.state};
-      for (std::size_t i = 0; i < 6; ++i) {
-        if (foot.value[i] > result_.greatest[i].value[i]) result_.greatest[i] = foot;
-        if (foot.value[i] < result_.least[i].value[i]) result_.least[i] = foot;
-      }
-      result_.least_bearing_force = std::min(result_.least_bearing_force, -plain[6]);
+    const MatrixXd columns = row_.evaluate_stand(static_cast<int>(k), pose, amplitudes);
+    // The drive pylon gathers the whole row's torque; the others stand alone in a gust.
+    const double gathered = stand.driven ? loads.gathered : 1;
+    const auto sum = [&](const FactoredCase& c) {
+      VectorXd ends = VectorXd::Zero(12);
+      for (const FactoredTerm& t : c.terms)
+        ends += t.factor * (t.wind ? gathered : 1) * columns.col(t.column);
+      return ends;
+    };
+    const fem::Member& post = stand.frame.members[0];
+    for (const FactoredCase& c : factored) {
+      const VectorXd ends = sum(c);
+      judge(post, stand.frame, ends, loads, c, result_.groups[post.group]);
+      for (const MemberResistance& r : stand_columns_[k])
+        judge_buckling(r, post, ends, loads, c, result_.buckling[post.group]);
     }
+    for (const FactoredCase& c : plain) note_foot(sum(c), static_cast<int>(k), loads, c);
   }
+}
+
+void StrengthCheck::note_foot(const VectorXd& ends, int stand, const StateLoads& loads,
+                              const FactoredCase& factored) {
+  // Post axes x, y, z are world Z, X, Y once the section's roll is taken back.
+  const double roll = row_.collector().stands[static_cast<std::size_t>(stand)].roll;
+  const double c = std::cos(roll), s = std::sin(roll);
+  const FootReaction foot{{c * ends[1] - s * ends[2], s * ends[1] + c * ends[2], ends[0],
+                           c * ends[4] - s * ends[5], s * ends[4] + c * ends[5], ends[3]},
+                          stand,
+                          loads.state,
+                          {}};
+  const auto keep = [&](FootReaction& place) {
+    place = foot;
+    place.combination = case_text(factored, loads);
+  };
+  for (std::size_t i = 0; i < 6; ++i) {
+    if (foot.value[i] > result_.greatest[i].value[i]) keep(result_.greatest[i]);
+    if (foot.value[i] < result_.least[i].value[i]) keep(result_.least[i]);
+  }
+  result_.least_bearing_force = std::min(result_.least_bearing_force, -ends[6]);
 }
 
 }  // namespace focalframe::models

@@ -23,14 +23,14 @@ struct ActionFactors {
 /// What a strength rule asks: factors per kind of state and a factor on the yield stress.
 struct StrengthRule {
   std::string name;
-  std::vector<ActionFactors> usual, accidental;  ///< accidental: STUCK
+  std::vector<ActionFactors> usual, accidental;  ///< of weight and leading wind; accidental: STUCK
   double on_yield = 1;                           ///< allowed stress over yield
   std::string text;                              ///< in words, with edition and confidence
+  loads::CombinationSet set;                     ///< every combination
 };
-/// "EN 1990", "ASCE 7", or the plain factor of the design; with neither given, unfactored against yield (not
+/// The design's set of combinations, or its plain factor; with neither given, unfactored against yield (not
 /// judged).
-/// `altitude` [m] and `asce_edition` choose between variants of a code's set.
-StrengthRule strength_rule(const LimitsInput& limits, const SiteInput& site);
+StrengthRule strength_rule(const TroughDesign& design);
 
 struct StressUse {
   double stress = 0;   ///< von Mises bound under factored actions [Pa]
@@ -39,6 +39,7 @@ struct StressUse {
   std::string part;    ///< member in the builder's words
   State state;
   Spread spread = Spread::linear;
+  std::string combination;  ///< "1.35 G + 1.5 W + 0.75 S (snow)"
 };
 
 /// Worst buckling of one member group, see models/member_buckling.h.
@@ -56,6 +57,7 @@ struct TorqueUse {
       0;  ///< what the drive must bring about the rotation axis, unfactored, sign as the body feels it [N m]
   State state;
   Spread spread = Spread::linear;
+  std::string combination;  ///< as in StressUse; factors 1 but for accompanying actions
 };
 
 /// Reaction of the ground on a foot, world axes: force X Y Z [N], moment X Y Z about the foot [N m].
@@ -63,6 +65,7 @@ struct FootReaction {
   std::array<double, 6> value{};
   int stand = 0;
   State state;
+  std::string combination;
 };
 
 struct StrengthResult {
@@ -75,16 +78,27 @@ struct StrengthResult {
   double least_bearing_force = 0;               ///< most negative vertical bearing force: uplift [N]
 };
 
+/// A variable action other than wind, in one of its ways ("snow", "hottest frame").
+struct OtherLoad {
+  loads::Action action = loads::Action::snow;
+  std::string name;
+  Eigen::VectorXd amplitudes;
+};
+
 /// Wind columns of one state: amplitudes of weight and of every wind variant (patterns x gust angles),
-/// feedback included.
+/// feedback included; what else may act in it.
 struct StateLoads {
   State state;
   Eigen::VectorXd weight;
   Eigen::MatrixXd wind;        ///< one column per variant
   std::vector<Spread> spread;  ///< per column
-  double gathered = 1;         ///< size and dynamic factor on drive torque and reactions [-]
-  double friction = 0;         ///< torque of the bearings, added to the drive's [N m]
+  std::vector<OtherLoad> others;
+  double ice_wind_share = 0;  ///< share of the wind columns that goes with ice [-]
+  double gathered = 1;        ///< size and dynamic factor on drive torque and reactions [-]
+  double friction = 0;        ///< torque of the bearings, added to the drive's [N m]
 };
+
+struct FactoredCase;
 
 class StrengthCheck {
  public:
@@ -97,15 +111,16 @@ class StrengthCheck {
 
  private:
   void add_members(const PoseModel& pose, const std::vector<StateLoads>& states);
-  const std::vector<ActionFactors>& factors(StateKind kind) const;
   void add_drive(const PoseModel& pose, const StateLoads& loads);
   void add_stands(const PoseModel& pose, const StateLoads& loads);
+  void note_foot(const Eigen::VectorXd& ends, int stand, const StateLoads& loads,
+                 const FactoredCase& factored);
   void judge(const fem::Member& member, const fem::Frame& frame,
-             const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant,
-             StressUse& worst) const;
+             const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads,
+             const FactoredCase& factored, StressUse& worst) const;
   void judge_buckling(const MemberResistance& resistance, const fem::Member& member,
-                      const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads, int variant,
-                      BucklingUse& worst) const;
+                      const Eigen::Ref<const Eigen::VectorXd>& ends, const StateLoads& loads,
+                      const FactoredCase& factored, BucklingUse& worst) const;
 
   const RowModel& row_;
   StrengthRule rule_;

@@ -10,8 +10,10 @@
 
 namespace focalframe::models {
 
-/// All broken rules at once; an accepted rule becomes a note with its reason. Poses without coefficients
-/// cannot be accepted away: there is no number to go on with.
-std::vector<Violation> wind_rules(const TroughDesign& design, const loads::CoefficientTable& table);
+/// All broken rules at once; `table_zone`: the field position the table was made for, empty = isolated; an
+/// accepted rule becomes a note with its reason. Poses without coefficients cannot be accepted away: there is
+/// no number to go on with.
+std::vector<Violation> wind_rules(const TroughDesign& design, const loads::CoefficientTable& table,
+                                  const std::string& table_zone = {});
 
 }  // namespace focalframe::models

@@ -9,6 +9,32 @@
 
 namespace focalframe::support {
 
+/// The factors of EN 1990 that tests need, as in models/tables/combinations/en-1990.xml.
+inline loads::CombinationSet en_1990() {
+  using loads::Action;
+  using loads::Purpose;
+  loads::CombinationSet set;
+  set.name = set.title = "EN 1990";
+  set.edition = "test";
+  set.combinations = {
+      {.name = "wind, weight against", .permanent = 1.35, .wind = 1.5, .snow = 0.75, .temperature = 0.9},
+      {.name = "wind, weight for", .permanent = 1, .wind = 1.5},
+      {.name = "snow", .leading = Action::snow, .permanent = 1.35, .wind = 0.9, .snow = 1.5},
+      {.name = "maintenance", .leading = Action::imposed, .permanent = 1.35, .wind = 0.9, .imposed = 1.5},
+      {.name = "ice", .leading = Action::ice, .permanent = 1.35, .ice = 1.5, .wind_on_ice = 1.5},
+      {.name = "stuck",
+       .purpose = Purpose::accidental,
+       .states = loads::StateGroup::stuck,
+       .permanent = 1,
+       .wind = 1},
+      {.name = "earthquake",
+       .purpose = Purpose::seismic,
+       .leading = Action::seismic,
+       .permanent = 1,
+       .seismic = 1}};
+  return set;
+}
+
 inline models::TroughDesign small_row() {
   models::TroughDesign d;
   d.name = "test row";
@@ -84,6 +110,7 @@ inline models::TroughDesign small_row() {
   d.limits.slope = 1.5 * mrad;
   d.limits.receiver_shift = 6 * mm;
   d.limits.strength = "EN 1990";
+  d.combinations = en_1990();
   return d;
 }
 
