@@ -148,8 +148,7 @@ void StrengthCheck::judge_buckling(const MemberResistance& resistance, const fem
                                    const FactoredCase& factored, BucklingUse& worst) const {
   const BucklingShare share = buckling_share(resistance, ends);
   if (!worst.part.empty() && share.used <= worst.used) return;
-  worst = {share.used,  share.compression, resistance.N,
-           member.name, loads.state,       spread_of(factored, loads)};
+  worst = {share.used, share.compression, resistance.N, member.name, loads.state, spread_of(factored, loads)};
 }
 
 void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLoads>& states) {

@@ -3,6 +3,7 @@
 #include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
+#include <numbers>
 
 #include "loads/bare_members.h"
 #include "loads/snow.h"
@@ -66,19 +67,21 @@ class Maker {
     return load;
   }
 
-  static bool is_rib(const fem::Member& m) { return m.group == "rib" || m.group == "rib root"; }
-
-  double depth_at(const fem::Member& m) const {
-    const auto y = [&](int node) { return std::abs(c_.body.nodes[static_cast<std::size_t>(node)].at.y()); };
-    return rib_depth(d_, layout_, (std::max(y(m.from), layout_.tube_half_width) + y(m.to)) / 2);
+  static bool is_rib(const fem::Member& m) { return m.group.starts_with("rib"); }
+  static bool is_tube(const fem::Member& m) { return m.group == "torque tube" || m.group.starts_with("box"); }
+  const fem::Section& section_at(const fem::Member& m) const {
+    return c_.body.sections[static_cast<std::size_t>(m.section)];
   }
 
   void add_bare() {
-    const double tube =
-        or_else(d_.bare_members.tube, profile_drag(d_.tube.profile)) * profile_depth(d_.tube.profile);
-    const double ribs = d_.bare_members.ribs * d_.ribs.thickness;
     const auto drag = [&](const fem::Member& m) {
-      return m.group == "torque tube" ? tube : is_rib(m) ? ribs : 0.0;
+      const fem::Section& section = section_at(m);
+      if (is_tube(m))
+        return or_else(d_.bare_members.tube,
+                       loads::drag_coefficient(section.round ? loads::BareShape::round
+                                                             : loads::BareShape::square)) *
+               section.depth_z;
+      return is_rib(m) ? d_.bare_members.ribs * section.depth_y : 0.0;
     };
     out_.at.bare_y = add(along_members(Vec3::UnitY(), drag));
     out_.at.bare_z = add(along_members(Vec3::UnitZ(), drag));
@@ -89,7 +92,7 @@ class Maker {
                          profile_depth(d_.receiver.posts.profile);
     LoadCase load = along_members(Vec3::UnitX(), [&](const fem::Member& m) {
       return m.group == "receiver post" ? posts
-             : is_rib(m)                ? fence_share * d_.bare_members.ribs * depth_at(m)
+             : is_rib(m)                ? fence_share * d_.bare_members.ribs * section_at(m).depth_z
                                         : 0.0;
     });
     const loads::Roughness back = d_.bare_members.back == "smooth"  ? loads::Roughness::smooth
@@ -129,26 +132,15 @@ class Maker {
     }
   }
 
-  double ice_around(const ProfileInput& p) const {
-    const double t = d_.ice.thickness, size = largest_size(p);
-    if (p.shape.starts_with("round"))
-      return loads::ice_on_tube({.outside_diameter = p.outside_diameter, .thickness = t});
-    const double other = std::isnan(p.width) ? (std::isnan(p.thickness) ? size : p.thickness) : p.width;
-    return loads::ice_density * 2 * t * (size + other + 2 * t);
-  }
-
   void add_ice() {
     const ReceiverInput& r = d_.receiver;
-    const double outer = or_else(r.sleeve.outside_diameter, r.outside_diameter);
-    const double receiver = loads::ice_on_tube({.outside_diameter = outer, .thickness = d_.ice.thickness});
-    const double tube = ice_around(d_.tube.profile), post = ice_around(r.posts.profile),
-                 purlin = d_.purlins.count > 0 ? ice_around(d_.purlins.profile) : 0;
+    const double t = d_.ice.thickness, outer = or_else(r.sleeve.outside_diameter, r.outside_diameter);
+    const double receiver = loads::ice_on_tube({.outside_diameter = outer, .thickness = t});
     const auto per_length = [&](const fem::Member& m) {
-      if (m.group == "torque tube") return tube;
+      const fem::Section& section = section_at(m);
       if (m.group == "receiver") return receiver;
-      if (m.group == "receiver post") return post;
-      if (m.group == "purlin") return purlin;
-      return is_rib(m) ? loads::ice_on_sheet(d_.ice.thickness) * depth_at(m) : 0.0;
+      // Corners carry a quarter circle each: together pi t^2.
+      return loads::ice_density * t * (section.perimeter + std::numbers::pi * t);
     };
     const double on_mirror = loads::ice_on_sheet(d_.ice.thickness) / mirror_per_area();
     for (const Vec3& direction : {Vec3(Vec3::UnitY()), Vec3(Vec3::UnitZ())}) {
@@ -177,9 +169,8 @@ class Maker {
       const fem::Member& m = c_.body.members[i];
       const int number = static_cast<int>(i);
       warm.temperatures.push_back({.member = number, .uniform = 1});
-      if (m.group == "torque tube")
-        frame.temperatures.push_back({.member = number, .gradient_z = 1 / profile_depth(d_.tube.profile)});
-      if (is_rib(m)) frame.temperatures.push_back({.member = number, .gradient_z = 1 / depth_at(m)});
+      if ((is_tube(m) || is_rib(m)) && section_at(m).depth_z > 0)
+        frame.temperatures.push_back({.member = number, .gradient_z = 1 / section_at(m).depth_z});
       // The lit side looks at the mirror, along -z.
       if (m.group == "receiver")
         receiver.temperatures.push_back({.member = number, .gradient_z = -1 / d_.receiver.outside_diameter});
