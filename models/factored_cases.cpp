@@ -2,6 +2,8 @@
 
 #include <algorithm>
 #include <cmath>
+#include <set>
+#include <utility>
 
 #include "models/quantity.h"
 
@@ -79,27 +81,27 @@ FactoredCase make(const Combination& c, const StateLoads& loads, int variant,
   return out;
 }
 
-bool same(const FactoredCase& a, const FactoredCase& b) {
-  return std::equal(a.terms.begin(), a.terms.end(), b.terms.begin(), b.terms.end(),
-                    [](const FactoredTerm& x, const FactoredTerm& y) {
-                      return x.column == y.column && x.factor == y.factor;
-                    });
-}
+// Cases in the order found, each sum of columns once.
+struct Cases {
+  std::vector<FactoredCase> list;
+  std::set<std::vector<std::pair<int, double>>> sums;
 
-void add(std::vector<FactoredCase>& cases, FactoredCase one) {
-  if (std::none_of(cases.begin(), cases.end(), [&](const FactoredCase& c) { return same(c, one); }))
-    cases.push_back(std::move(one));
-}
+  void add(FactoredCase one) {
+    std::vector<std::pair<int, double>> sum;
+    for (const FactoredTerm& t : one.terms) sum.emplace_back(t.column, t.factor);
+    if (sums.insert(std::move(sum)).second) list.push_back(std::move(one));
+  }
+};
 
-void add_combination(std::vector<FactoredCase>& cases, const Combination& c, const StateLoads& loads) {
+void add_combination(Cases& cases, const Combination& c, const StateLoads& loads) {
   if (loads::factor_of(c, c.leading) > 0 && !occurs(loads, c.leading)) return;
   std::vector<std::vector<int>> choices;
   std::vector<int> chosen;
   choose(c, loads, 0, chosen, choices);
   const bool windy = c.wind > 0 || c.wind_on_ice > 0;
   for (const std::vector<int>& others : choices) {
-    if (!windy || c.leading != Action::wind) add(cases, make(c, loads, -1, others));
-    for (int v = 0; windy && v < loads.wind.cols(); ++v) add(cases, make(c, loads, v, others));
+    if (!windy || c.leading != Action::wind) cases.add(make(c, loads, -1, others));
+    for (int v = 0; windy && v < loads.wind.cols(); ++v) cases.add(make(c, loads, v, others));
   }
 }
 
@@ -146,19 +148,19 @@ const loads::CombinationSet& plain_set() {
 
 std::vector<FactoredCase> factored_cases(const loads::CombinationSet& set, const StateLoads& loads,
                                          Wanted wanted) {
-  std::vector<FactoredCase> cases;
+  Cases cases;
   // Whatever a set's service combinations are, the drive and the ground feel the full wind of the state.
   const bool person = loads.state.kind == StateKind::maintenance;
   if (wanted == Wanted::service) add_combination(cases, plain(person ? "maintenance" : "wind"), loads);
   for (const Combination& c : set.combinations)
     if (fits(c, loads, wanted)) add_combination(cases, c, loads);
-  if (cases.empty())
+  if (cases.list.empty())
     add_combination(cases,
                     plain(person                                 ? "maintenance"
                           : loads.state.kind == StateKind::stuck ? "stuck"
                                                                  : "wind"),
                     loads);
-  return cases;
+  return std::move(cases.list);
 }
 
 std::string case_text(const FactoredCase& factored, const StateLoads& loads) {

@@ -36,7 +36,7 @@ PoseLimits::PoseLimits(const RowModel& row, const TroughDesign& design, const lo
       design_(design),
       winds_(design, table),
       optics_(row, design),
-      rule_(strength_rule(design.limits, design.site)),
+      rule_(strength_rule(design)),
       strength_judged_(!design.limits.strength.empty() || !std::isnan(design.limits.strength_factor)),
       peak_(table.kind == loads::CoefficientKind::peak),
       axis_(axis_wind(design)),

@@ -61,7 +61,7 @@ StowReport stow_report(const TroughDesign& design, const loads::CoefficientTable
   out.table = table.name;
   out.table_confidence = table.confidence;
   out.zone = design.wind.zone;
-  out.rule = strength_rule(design.limits, design.site).text;
+  out.rule = strength_rule(design).text;
   out.by_hand = design.operation.turned_by == "hand";
   out.moving_capacity = moving_capacity(design);
   out.limits = wind_limits(row, design, table);

@@ -35,10 +35,34 @@ Spread spread_of(const FactoredCase& factored, const StateLoads& loads) {
 
 bool moves(StateKind kind) { return kind == StateKind::operate || kind == StateKind::turning; }
 
-fem::Resultants at_end(const Eigen::Ref<const VectorXd>& f, bool far_end) {
+template <class Ends>
+fem::Resultants at_end(const Ends& f, bool far_end) {
   const int o = far_end ? 6 : 0;
   const double s = far_end ? 1 : -1;  // forces on the face with outward normal +x
   return {s * f[o], s * f[o + 1], s * f[o + 2], s * f[o + 3], s * f[o + 4], s * f[o + 5]};
+}
+
+template <class Ends>
+double greatest_stress(const fem::Section& section, const Ends& ends) {
+  return std::max(fem::von_mises_bound(section, at_end(ends, false)),
+                  fem::von_mises_bound(section, at_end(ends, true)));
+}
+
+double allowed_stress(const fem::Frame& frame, const fem::Member& member, double on_yield) {
+  return frame.materials[static_cast<std::size_t>(member.material)].yield * on_yield;
+}
+
+// Stress of every member under each column alone. The bound on von Mises is a norm of the resultants, so the
+// stress of a factored sum is at most the factored sum of these: most cases need no closer look.
+MatrixXd stress_alone(const fem::Frame& frame, const Eigen::Ref<const MatrixXd>& forces) {
+  MatrixXd alone(frame.members.size(), forces.cols());
+  for (int c = 0; c < forces.cols(); ++c)
+    for (int m = 0; m < alone.rows(); ++m) {
+      const fem::Member& member = frame.members[static_cast<std::size_t>(m)];
+      alone(m, c) = greatest_stress(frame.sections[static_cast<std::size_t>(member.section)],
+                                    forces.col(c).segment<12>(12 * m));
+    }
+  return alone;
 }
 
 // Factor pairs of the combinations in which wind leads, each once; a set that names none for STUCK takes it
@@ -128,10 +152,8 @@ void StrengthCheck::judge(const fem::Member& member, const fem::Frame& frame,
                           const Eigen::Ref<const VectorXd>& ends, const StateLoads& loads,
                           const FactoredCase& factored, StressUse& worst) const {
   const fem::Section& section = frame.sections[static_cast<std::size_t>(member.section)];
-  const fem::Material& material = frame.materials[static_cast<std::size_t>(member.material)];
-  const double stress = std::max(fem::von_mises_bound(section, at_end(ends, false)),
-                                 fem::von_mises_bound(section, at_end(ends, true)));
-  const double allowed = material.yield * rule_.on_yield;
+  const double stress = greatest_stress(section, ends);
+  const double allowed = allowed_stress(frame, member, rule_.on_yield);
   const double used = allowed > 0 ? stress / allowed : 0;
   if (!worst.part.empty() && (allowed > 0 ? used <= worst.used : stress <= worst.stress)) return;
   worst = {stress,
@@ -164,9 +186,13 @@ void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLo
   const MatrixXd forces = row_.end_forces(pose, amplitudes);
   const fem::Frame& frame = row_.collector().body;
   Eigen::Matrix<double, 12, 1> ends;
+  VectorXd most(frame.members.size());
   at = 0;
   for (const StateLoads& loads : states) {
+    const MatrixXd alone = stress_alone(frame, forces.middleCols(at, column_count(loads)));
     for (const FactoredCase& factored : factored_cases(rule_.set, loads, Wanted::strength)) {
+      most.setZero();
+      for (const FactoredTerm& t : factored.terms) most += std::abs(t.factor) * alone.col(t.column);
       const auto take = [&](std::size_t m) {
         const int first = 12 * static_cast<int>(m);
         const FactoredTerm& weight = factored.terms.front();
@@ -175,6 +201,10 @@ void StrengthCheck::add_members(const PoseModel& pose, const std::vector<StateLo
           ends += factored.terms[t].factor * forces.block<12, 1>(first, at + factored.terms[t].column);
       };
       for (std::size_t m = 0; m < frame.members.size(); ++m) {
+        const StressUse& worst = *of_member_[m];
+        const double allowed = allowed_stress(frame, frame.members[m], rule_.on_yield);
+        const double known = allowed > 0 ? worst.used * allowed : worst.stress;
+        if (!worst.part.empty() && most[static_cast<int>(m)] <= known) continue;
         take(m);
         judge(frame.members[m], frame, ends, loads, factored, *of_member_[m]);
       }

@@ -214,7 +214,7 @@ TEST_CASE("brute force over fine speeds finds the same limits on random rows", "
         }
       loads_here.wind.resize(weight.size(), static_cast<int>(columns.size()));
       for (std::size_t i = 0; i < columns.size(); ++i) loads_here.wind.col(static_cast<int>(i)) = columns[i];
-      StrengthCheck check(row, strength_rule(d.limits, d.site));
+      StrengthCheck check(row, strength_rule(d));
       check.add(pose, {loads_here});
       return check.result();
     };
