@@ -40,7 +40,7 @@ void keep_greatest(DishForce& kept, double value, const DishStrength::Loads& loa
 
 DishStrength::DishStrength(const DishModel& model, const DishDesign& design)
     : model_(model),
-      rule_(strength_rule(design.limits, design.site)),
+      rule_(strength_rule(design)),
       rod_(design.dish.actuator),
       friction_(design.dish.axis.friction) {
   const fem::Frame& body = model.collector().body;

@@ -10,6 +10,10 @@
 
 namespace focalframe::models {
 
+/// Drag of receiver or feed, its legs and the base [-]: subcritical long cylinder 1.2 and sharp-edged square
+/// bar 2.0-2.2 (Munson, Young, Okiishi, Fundamentals of Fluid Mechanics, Fig. 9.19, read in a page scan).
+inline constexpr double receiver_drag = 1.2, post_drag = 2.1;
+
 /// Unit vector towards where the wind comes from, world or yoke axes: psi clockwise from +Y seen from above.
 Eigen::Vector3d upwind_of(double wind_from);
 

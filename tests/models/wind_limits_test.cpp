@@ -83,7 +83,7 @@ TroughDesign stiff_bay() {
 
 double receiver_torque(const RowModel& row, double length) {  // per pascal, trough facing the sky
   const Collector& c = row.collector();
-  return receiver_drag * c.receiver_drag_width * length * (c.focal_length + c.axis_to_vertex);
+  return row.units().receiver_drag * c.receiver_drag_width * length * (c.focal_length + c.axis_to_vertex);
 }
 
 }  // namespace
@@ -243,7 +243,8 @@ TEST_CASE("at the wind found, the check finds every limit just used up", "[limit
   d.tube.profile.outside_diameter = 82.5 * mm;
   d.drive.moving_torque = 4000;
   const auto table = support::test_table();
-  const RowModel row(build_trough(d), table.stations);
+  const BuiltRow built = build_row(d, table);
+  const RowModel& row = *built.row;
   MapOptions options;
   for (double e = -90; e <= 165; e += 15) options.elevations.push_back(e * deg);
   const WindLimits limits = wind_limits(row, d, table, options);
@@ -378,8 +379,8 @@ TEST_CASE("a pylon yields where statics says", "[limits][closed-form]") {
   const fem::Section post = fem::rectangular_tube({.depth_z = 80 * mm, .width_y = 80 * mm, .wall = 4 * mm});
   const double h = d.row.axis_height, q = axis.pressure(found.gust), weight = row.body_mass * 9.80665;
   const double drag = 1.6 * row.collector().mirror_area +
-                      receiver_drag * row.collector().receiver_drag_width * d.row.module_length;
-  const double line = post_drag * 80 * mm;
+                      row.units().receiver_drag * row.collector().receiver_drag_width * d.row.module_length;
+  const double line = row.units().pylon_drag * 80 * mm;
   const double foot = q * (drag / 2 * h + line * h * h / 2);  // about +X, wind from +Y
   const double driven = foot - weight * (row.body_centre.z() + d.row.axis_to_vertex);
   const double shear = q * (drag / 2 + line * h), axial = weight / 2 + post.A * 7850 * 9.80665 * h;

@@ -4,6 +4,7 @@
 
 #include "fem/units.h"
 #include "models/dish_design.h"
+#include "tests/support/trough_design.h"
 
 namespace focalframe::support {
 
@@ -74,6 +75,7 @@ inline models::DishDesign small_dish() {
   d.optics.set_true = 45 * deg;
   d.optics.workshop_slope = 3 * mrad;
   d.limits.strength = "EN 1990";
+  d.combinations = en_1990();
   return d;
 }
 
