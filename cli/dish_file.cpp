@@ -5,6 +5,7 @@
 #include <cstdlib>
 #include <map>
 
+#include "cli/combination_file.h"
 #include "cli/nearest.h"
 #include "cli/trough_reader.h"
 #include "models/schema_dish.h"
@@ -179,7 +180,13 @@ class Reader {
 
 }  // namespace
 
-DishFile read_dish(const DesignFile& design) { return Reader(design).run(); }
+DishFile read_dish(const DesignFile& design) {
+  DishFile dish = Reader(design).run();
+  const auto strength = dish.lines.find("limits/strength");
+  resolve_combinations(dish.design, design.path, strength == dish.lines.end() ? 0 : strength->second,
+                       dish.messages);
+  return dish;
+}
 
 std::vector<std::string> dish_attributes_with_own_units() {
   return {"radio/frequency", "radio/edge-taper", "limits/gain-loss", "limits/pointing"};

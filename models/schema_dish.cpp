@@ -39,6 +39,12 @@ Field& field_named(Element& element, const std::string& name) {
                        [&](const Field& f) { return f.name == name; });
 }
 
+// What a trough has and a dish does not.
+void leave_out(Element& element, const std::vector<std::string>& names) {
+  std::erase_if(element.fields,
+                [&](const Field& f) { return std::find(names.begin(), names.end(), f.name) != names.end(); });
+}
+
 // An element that means the same in both kinds.
 Element& share(Table& table, const std::string& path) {
   table.push_back(*find_element(path));
@@ -361,7 +367,13 @@ void add_run(Table& table) {
       .preset("none");
   Field extra = table.back().fields.front();
   table.pop_back();
-  share(table, "wind").fields.push_back(extra);
+  Element& wind = share(table, "wind");
+  leave_out(wind, {"along-row", "faces-open-ground", "map", "altitude-in-speed", "damping"});
+  Field& dynamic = field_named(wind, "dynamic-factor");  // a number: a row's first frequency is not a dish's
+  dynamic.words.clear();
+  dynamic.word_slot = nullptr;
+  dynamic.help = "cd on drive and foundation";
+  wind.fields.push_back(extra);
   for (const char* path : {"wind/operate", "wind/turning", "wind/stow", "wind/stuck", "wind/year"})
     share(table, path);
   Element& run = share(table, "operation");
@@ -383,7 +395,7 @@ void add_run(Table& table) {
 void add_asked(Table& table) {
   Element& optics = share(table, "optics");
   optics.required = false;
-  std::erase_if(optics.fields, [](const Field& f) { return f.name == "incidence"; });
+  leave_out(optics, {"incidence", "wind-averaging"});
   field_named(optics, "workshop-slope").help = "of the mirror normal, in each of two directions";
   ElementMaker<RadioInput> radio(
       table, "radio", false, [](D& d) -> RadioInput& { return of(d).radio; },
@@ -400,7 +412,7 @@ void add_asked(Table& table) {
       .required()
       .between(0, 0.1);
   Element& limits = share(table, "limits");
-  std::erase_if(limits.fields, [](const Field& f) { return f.name == "twist"; });
+  leave_out(limits, {"twist"});
   std::vector<Field> fields = limits.fields;
   ElementMaker<DishLimitsInput> more(
       table, "limits", false, [](D& d) -> DishLimitsInput& { return of(d).limits; }, "");
