@@ -114,7 +114,7 @@ Json parking(const DishAssessment& a) {
                     {"wind_from_rad", l.wind_from},
                     {"gust_limit_m_s", number_json(l.gust)},
                     {"gives_first", l.governs}});
-  const auto pose = [](const models::StowPose& p) {
+  const auto pose = [](const models::DishStowPose& p) {
     return Json{{"elevation_rad", number_json(p.elevation)},
                 {"azimuth", p.azimuth},
                 {"gust_limit_m_s", number_json(p.gust)},

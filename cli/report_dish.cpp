@@ -152,7 +152,7 @@ std::string parking(const DishAssessment& a) {
     }
     out += "  " + a.parking[weakest].governs + "\n";
   }
-  const auto pose = [](const char* what, const models::StowPose& p) {
+  const auto pose = [](const char* what, const models::DishStowPose& p) {
     return text_of("  %s %.0f deg, %s: %.1f m/s, then: %s\n", what, p.elevation / deg, p.azimuth.c_str(),
                    p.gust, p.governs.c_str());
   };

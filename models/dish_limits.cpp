@@ -123,7 +123,7 @@ std::vector<DishLimit> DishLimits::map(StateKind kind) const {
 StowSearch search_stow(const std::vector<DishLimit>& map, const DishDesign& design) {
   StowSearch out;
   const auto least = [&](double elevation, double towards, double reach) {
-    StowPose pose{elevation, std::numeric_limits<double>::infinity(), {}, {}};
+    DishStowPose pose{elevation, std::numeric_limits<double>::infinity(), {}, {}};
     for (const DishLimit& l : map)
       if (std::abs(l.elevation - elevation) < 1e-9 && within(l.wind_from, towards, reach) &&
           !(l.gust >= pose.gust)) {
@@ -132,7 +132,7 @@ StowSearch search_stow(const std::vector<DishLimit>& map, const DishDesign& desi
       }
     return pose;
   };
-  const auto better = [](const StowPose& a, const StowPose& b) {
+  const auto better = [](const DishStowPose& a, const DishStowPose& b) {
     return std::isnan(b.gust) || a.gust > b.gust;
   };
   std::vector<double> done;
@@ -140,13 +140,13 @@ StowSearch search_stow(const std::vector<DishLimit>& map, const DishDesign& desi
     if (std::any_of(done.begin(), done.end(), [&](double e) { return std::abs(e - l.elevation) < 1e-9; }))
       continue;
     done.push_back(l.elevation);
-    StowPose any = least(l.elevation, 0, 180 * deg);
+    DishStowPose any = least(l.elevation, 0, 180 * deg);
     any.azimuth = "any";
     if (better(any, out.any)) out.any = any;
     if (std::abs(l.elevation - design.operation.stow_at) < 1e-9) out.asked = any;
     for (const auto& [towards, word] :
          {std::pair(0.0, "face to the wind"), std::pair(180 * deg, "back to the wind")}) {
-      StowPose turned = least(l.elevation, towards, 45 * deg);
+      DishStowPose turned = least(l.elevation, towards, 45 * deg);
       turned.azimuth = word;
       if (better(turned, out.turned)) out.turned = turned;
     }

@@ -45,12 +45,12 @@ class DishLimits {
 
 /// The best pose to park in: with the wind from anywhere, and with the azimuth turned so that the wind
 /// strikes the face or the back within 45 deg.
-struct StowPose {
+struct DishStowPose {
   double elevation = not_given, gust = not_given;
   std::string governs, azimuth;  ///< azimuth: "any", "face to the wind", "back to the wind"
 };
 struct StowSearch {
-  StowPose asked, any, turned;
+  DishStowPose asked, any, turned;
 };
 StowSearch search_stow(const std::vector<DishLimit>& map, const DishDesign& design);
 
