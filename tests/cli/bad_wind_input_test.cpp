@@ -8,6 +8,7 @@
 #include "cli/quantity.h"
 #include "cli/shipped_tables.h"
 #include "loads/guards.h"
+#include "models/states.h"
 #include "models/wind_rules.h"
 #include "tests/cli/designs.h"
 
