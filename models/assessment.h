@@ -12,8 +12,8 @@
 #include "models/optics_check.h"
 #include "models/optics_study.h"
 #include "models/rigging.h"
-#include "models/row_trace.h"
 #include "models/row_torsion.h"
+#include "models/row_trace.h"
 #include "models/schema.h"
 #include "models/states.h"
 #include "models/strength_check.h"
@@ -46,7 +46,7 @@ struct OpticalRow {
   bool calm = false;  ///< weight only
   Spread spread = Spread::linear;
   OpticalResult result;
-  RowTrace trace;  ///< only when AssessOptions asks for rays
+  RowTrace trace;    ///< only when AssessOptions asks for rays
   std::string also;  ///< what else acts: "hottest frame", "friction +"; empty = nothing
 };
 

@@ -278,8 +278,7 @@ void judge(const TroughDesign& design, Assessment& a) {
     if (basis == "guess") ++a.guesses;
   a.not_checked = {"joints, welds, bolts, bearings and mirror pads",
                    "stress of mirror sheet or glass between its supports",
-                   "local buckling of thin walls, buckling of the frame as a whole",
-                   "fatigue",
+                   "local buckling of thin walls, buckling of the frame as a whole", "fatigue",
                    "row ends and shading of the receiver (shown beside the light, not in it)"};
   const auto left_out = [&](bool given, const char* what) {
     if (!given) a.not_checked.push_back(what);

@@ -44,11 +44,10 @@ loads::WindAtHeight wind_of(const TroughDesign& design, const WindStateInput& wi
   stated.pressure *= rarer * rarer;
   loads::WindAtHeight at_axis = loads::wind_at(design.row.axis_height, stated, site_of(design.site));
   if (!std::isnan(years))
-    at_axis.chain.insert(
-        at_axis.chain.begin(),
-        {"return-period factor c_prob", rarer, "-",
-         "((1 - 0.2 ln(-ln(1 - 1/T))) / (1 - 0.2 ln(-ln 0.98)))^0.5, T = " + number_text(years) +
-             " years, on the speed stated for 50 (EN 1991-1-4, 4.2)"});
+    at_axis.chain.insert(at_axis.chain.begin(),
+                         {"return-period factor c_prob", rarer, "-",
+                          "((1 - 0.2 ln(-ln(1 - 1/T))) / (1 - 0.2 ln(-ln 0.98)))^0.5, T = " +
+                              number_text(years) + " years, on the speed stated for 50 (EN 1991-1-4, 4.2)"});
   return at_axis;
 }
 
