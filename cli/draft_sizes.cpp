@@ -2,6 +2,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "cli/combination_file.h"
 #include "cli/draft.h"
 #include "fem/units.h"
 #include "models/catalogue.h"
@@ -201,6 +202,8 @@ TroughDesign starter_trough(const DraftSizes& sizes) {
   for (const char* path : {"end-plates", "counterweights", "pylons/footing", "drive", "site", "wind/operate",
                            "wind/stow", "wind/stuck", "optics"})
     d.basis[path] = "guess";
+  std::vector<Message> ignored;  // the set is shipped
+  resolve_combinations(d, "", 0, ignored);
   return d;
 }
 

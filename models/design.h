@@ -200,7 +200,7 @@ struct WindInput {
   std::string map;        ///< "service" | "ultimate": level of the stated speeds; empty = not said
   bool altitude_in_speed = false;   ///< the stated speeds are already reduced for the site's altitude
   bool faces_open_ground = false;   ///< no row stands upwind
-  bool along_row = true;            ///< STOW also in oblique wind and in wind along the row
+  bool along_row = true;            ///< UNFINISHED also in wind along the row
   bool size_factor = true;          ///< EN size factor for drive and foundation
   double moment_slope = not_given;  ///< overrides dCm/dp of the table [1/rad]
 };

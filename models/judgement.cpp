@@ -278,7 +278,9 @@ void judge(const TroughDesign& design, Assessment& a) {
     if (basis == "guess") ++a.guesses;
   a.not_checked = {"joints, welds, bolts, bearings and mirror pads",
                    "stress of mirror sheet or glass between its supports",
-                   "local buckling of thin walls, buckling of the frame as a whole", "fatigue",
+                   "local buckling of thin walls, buckling of the frame as a whole",
+                   "fatigue",
+                   "wind along the row and oblique wind on the finished row",
                    "row ends and shading of the receiver (shown beside the light, not in it)"};
   const auto left_out = [&](bool given, const char* what) {
     if (!given) a.not_checked.push_back(what);
@@ -290,7 +292,6 @@ void judge(const TroughDesign& design, Assessment& a) {
   left_out(!std::isnan(design_acceleration(design.earthquake)), "earthquake (no <earthquake>)");
   left_out(!std::isnan(design.maintenance.load), "people and vehicles touching it (no <maintenance>)");
   left_out(design.wind.unfinished.given, "the row while it is being built (no <wind><unfinished>)");
-  left_out(design.wind.along_row, "wind along the row and oblique wind (along-row=\"no\")");
   remark(design, a);
   caution(design, a, a.cautions);
 }

@@ -18,7 +18,6 @@ constexpr std::array<const char*, 18> shaping = {
 
 bool shapes_frame(const std::string& element, const std::string& attribute) {
   if (element == "drive") return attribute == "stiffness" || attribute == "mass" || attribute == "friction";
-  if (element == "wind") return attribute == "along-row";
   const std::string first = element.substr(0, element.find('/'));
   return std::find(shaping.begin(), shaping.end(), first) != shaping.end();
 }

@@ -401,10 +401,6 @@ void add_site(Table& table) {
   wind.add("faces-open-ground", Q::none, &WindInput::faces_open_ground, "yes: no row stands upwind")
       .words({"no", "yes"})
       .preset("no");
-  wind.add("along-row", Q::none, &WindInput::along_row,
-           "yes: STOW also in oblique wind and in wind along the row")
-      .words({"yes", "no"})
-      .preset("yes");
   wind.add("size-factor", Q::none, &WindInput::size_factor,
            "EN 1991-1-4 size factor for drive and foundation")
       .words({"yes", "no"})

@@ -368,7 +368,7 @@ void add_run(Table& table) {
   Field extra = table.back().fields.front();
   table.pop_back();
   Element& wind = share(table, "wind");
-  leave_out(wind, {"along-row", "faces-open-ground", "map", "altitude-in-speed", "damping"});
+  leave_out(wind, {"faces-open-ground", "map", "altitude-in-speed", "damping"});
   Field& dynamic = field_named(wind, "dynamic-factor");  // a number: a row's first frequency is not a dish's
   dynamic.words.clear();
   dynamic.word_slot = nullptr;

@@ -109,11 +109,6 @@ std::vector<State> asked_states(const TroughDesign& design) {
       add(states, StateKind::stow,
           within > 0 ? std::vector<double>{op.stow_at - within, op.stow_at, op.stow_at + within}
                      : std::vector<double>{op.stow_at});
-      // Oblique from both sides, and once along the row: the row is alike from both ends, and everything but
-      // the reactions' signs is too.
-      if (design.wind.along_row)
-        for (double from : {oblique_angle, pi - oblique_angle, along_row_angle})
-          states.push_back({StateKind::stow, op.stow_at, from});
     }
     lowest = std::min(lowest, op.stow_at);
     highest = std::max(highest, op.stow_at);

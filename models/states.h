@@ -31,8 +31,8 @@ std::string place_text(const State& state);
 
 /// Every asked state in both winds. Operate: the ends of the tracking range and every multiple of 15 deg
 /// between. Turning: from the stow pose to the farther end of the tracking range, likewise. Stow: the pose
-/// and both ends of its tolerance, also in oblique wind and in wind along the row. Stuck: the drive's whole
-/// range (or what the states above span). Unfinished and maintenance: their own pose.
+/// and both ends of its tolerance. Stuck: the drive's whole range (or what the states above span). Unfinished
+/// and maintenance: their own pose, unfinished also in wind along the row.
 std::vector<State> asked_states(const TroughDesign& design);
 
 /// The wind of each kind of state at the rotation axis; chain empty when the design states none. Maintenance

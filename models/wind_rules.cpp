@@ -117,13 +117,6 @@ std::vector<Violation> wind_rules(const TroughDesign& design, const loads::Coeff
   use.height_ratio = design.row.axis_height / width;
   use.yaw = 0;
   if (const auto v = loads::guard_validity(table, use)) found.push_back(violation_of(*v, "wind", "table"));
-  if (design.wind.along_row && design.wind.stow.given)
-    if (const auto v = loads::guard_validity(table, {.yaw = oblique_angle})) {
-      found.push_back(violation_of(*v, "wind", "along-row"));
-      found.back().level = Violation::Level::note;
-      found.back().text += " The load across the row is taken by cos^2 of that angle.";
-      found.back().advice.clear();
-    }
   for (Violation& v : found) accept(design, v);
   for (const Violation& gap : table_gaps(design, table)) found.push_back(gap);
   return found;
