@@ -52,9 +52,8 @@ loads::Site site_of(const SiteInput& site);
 /// Part of the gust angle that turbulence brings, added to the pose tolerance for strength [rad] (judgement).
 inline constexpr double turbulence_angle = 5.0 * 3.14159265358979323846 / 180.0;
 
-/// Angles off the row's normal of the oblique and the along-row wind [rad].
-inline constexpr double oblique_angle = 45.0 * 3.14159265358979323846 / 180.0,
-                        along_row_angle = 90.0 * 3.14159265358979323846 / 180.0;
+/// Angle off the row's normal of the along-row wind [rad].
+inline constexpr double along_row_angle = 90.0 * 3.14159265358979323846 / 180.0;
 
 /// Poses of asked states that the table does not cover, as violations with rule "table-range".
 std::vector<Violation> table_gaps(const TroughDesign& design, const loads::CoefficientTable& table);
