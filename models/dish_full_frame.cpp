@@ -2,13 +2,13 @@
 
 #include <cmath>
 
-#include "fem/inside.h"
 #include "fem/shape_parts.h"
 #include "fem/units.h"
 #include "loads/pose.h"
 #include "models/append_frame.h"
 #include "models/dish.h"
 #include "models/dish_states.h"
+#include "models/inside_proof.h"
 
 namespace focalframe::models {
 namespace {
@@ -55,21 +55,6 @@ Arms bare_yoke(const DishCollector& c) {
   out.azimuth = number[static_cast<std::size_t>(c.azimuth)];
   if (c.yoke_pin >= 0) out.pin = number[static_cast<std::size_t>(c.yoke_pin)];
   return out;
-}
-
-// Short members many: more pieces would cost time and change nothing.
-constexpr fem::InsideLimits dish_limits{
-    .error = 5e-3, .first_pieces = 1, .most_pieces = 8, .most_members = 20000};
-
-template <class Inside>
-StabilityProof proof_of(const Inside& inside) {
-  StabilityProof proof;
-  if (inside.modes.empty()) return proof;
-  proof.most_pieces = inside.most_pieces;
-  proof.error = inside.error;
-  proof.counted = inside.modes.front().counted;
-  proof.count_at = inside.modes.front().count_at;
-  return proof;
 }
 
 std::string words_of(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
@@ -152,7 +137,7 @@ RowStability dish_stability(const DishDesign& design, const loads::CoefficientTa
   RowStability out;
   out.elevation = elevation;
   out.freedoms = full.frame.freedoms();
-  const fem::InsideModes inside = fem::modes_inside(full.frame, count, dish_limits);
+  const fem::InsideModes inside = fem::modes_inside(full.frame, count, collector_limits);
   for (const fem::Mode& mode : inside.modes)
     out.modes.push_back({mode.frequency, mode.residual, words_of(inside.divided.frame, mode.shape)});
   out.modes_proof = proof_of(inside);
@@ -173,7 +158,7 @@ RowStability dish_stability(const DishDesign& design, const loads::CoefficientTa
       load.nodes.push_back(
           {full.first_body_node + n, turn * forces.segment<3>(6 * n), turn * forces.segment<3>(6 * n + 3)});
     std::vector<RowBuckling> found;
-    const fem::InsideBuckling bows = fem::buckling_inside(full.frame, load, 3, 1000, dish_limits);
+    const fem::InsideBuckling bows = fem::buckling_inside(full.frame, load, 3, 1000, collector_limits);
     for (const fem::BucklingMode& mode : bows.modes)
       found.push_back({mode.factor, mode.residual, words_of(bows.divided.frame, mode.shape)});
     const bool worse = !found.empty() && (out.buckling.empty() || found[0].factor < out.buckling[0].factor);

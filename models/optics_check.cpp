@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "models/set_true.h"
 #include "models/sun_table.h"
 #include "models/wind_load.h"
 
@@ -112,19 +113,7 @@ std::vector<OpticalMotion> OpticsCheck::motions(const PoseModel& pose, const Mat
         grid(panel.v, c, rows), grid(panel.w, c, rows), grid(panel.turn, c, rows), grid(panel.along, c, rows),
         grid(receiver, c, 2),   grid(vertex, c, 2),     module_turn.col(c),        beside(0, c),
         encoder(0, c)};
-    if (set_true && !set_.empty()) {
-      const OpticalMotion& set = set_.front();
-      m.v -= set.v;
-      m.w -= set.w;
-      m.turn -= set.turn;
-      m.along -= set.along;
-      m.receiver -= set.receiver;
-      m.vertex -= set.vertex;
-      m.module_turn -= set.module_turn;
-      m.beside_drive -= set.beside_drive;
-      m.encoder -= set.encoder;
-    }
-    out.push_back(std::move(m));
+    out.push_back(set_true && !set_.empty() ? against(std::move(m), set_.front()) : std::move(m));
   }
   return out;
 }

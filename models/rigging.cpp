@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "fem/units.h"
+#include "models/set_true.h"
 #include "models/wind_load.h"
 
 namespace focalframe::models {
@@ -11,19 +12,6 @@ namespace {
 
 OpticalMotion weighed(const OpticsCheck& check, double elevation) {
   return check.motions(check.row().pose(elevation), weight_amplitudes(check.row(), elevation), false).front();
-}
-
-OpticalMotion against(OpticalMotion m, const OpticalMotion& set) {
-  m.v -= set.v;
-  m.w -= set.w;
-  m.turn -= set.turn;
-  m.along -= set.along;
-  m.receiver -= set.receiver;
-  m.vertex -= set.vertex;
-  m.module_turn -= set.module_turn;
-  m.beside_drive -= set.beside_drive;
-  m.encoder -= set.encoder;
-  return m;
 }
 
 RiggingChoice judge(const OpticsCheck& check, const std::vector<OpticalMotion>& poses, double set_true) {

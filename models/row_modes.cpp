@@ -4,11 +4,11 @@
 #include <numbers>
 #include <optional>
 
-#include "fem/inside.h"
 #include "fem/near_mechanism.h"
 #include "fem/shape_parts.h"
 #include "fem/units.h"
 #include "models/full_frame.h"
+#include "models/inside_proof.h"
 #include "models/posed_row.h"
 #include "models/states.h"
 #include "models/trough.h"
@@ -19,21 +19,6 @@ namespace {
 // Buckling factors beyond this are of no interest: nothing is near its stability limit.
 constexpr double greatest_factor = 1000;
 
-// A row has thousands of members, most of them short: more pieces would cost time and change nothing.
-constexpr fem::InsideLimits row_limits{
-    .error = 5e-3, .first_pieces = 1, .most_pieces = 8, .most_members = 20000};
-
-template <class Inside>
-StabilityProof proof_of(const Inside& inside) {
-  StabilityProof proof;
-  if (inside.modes.empty()) return proof;
-  proof.most_pieces = inside.most_pieces;
-  proof.error = inside.error;
-  proof.counted = inside.modes.front().counted;
-  proof.count_at = inside.modes.front().count_at;
-  return proof;
-}
-
 std::string words_of(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
   return fem::shape_words(frame, fem::shape_parts(frame, shape),
                           {"along the row", "across the row", "up and down"});
@@ -43,7 +28,7 @@ std::string words_of(const fem::Frame& frame, const Eigen::MatrixXd& shape) {
 
 RowStability row_stability(const TroughDesign& design, const loads::CoefficientTable& table, double elevation,
                            int count, int factors, bool divide) {
-  fem::InsideLimits limits = row_limits;
+  fem::InsideLimits limits = collector_limits;
   if (!divide) limits.most_pieces = 1;
   const RowModel row(build_trough(design), {});
   const FullFrame full = full_frame(row.collector(), elevation);

@@ -47,7 +47,7 @@ void legend(Drawing& d, const std::vector<Series>& series) {
 }
 
 void axes(Drawing& d, const LineChart& chart, const Frame& f, const std::vector<double>& marks_y) {
-  const double step = chart.step_across > 0 ? chart.step_across : 0;
+  const double step = chart.step_across;
   std::vector<double> marks_x = round_marks(f.x0, f.x1, 7);
   if (step > 0) {
     marks_x.clear();
